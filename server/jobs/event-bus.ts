@@ -1,0 +1,21 @@
+import type { ServerEvent } from '../../shared/schemas/events.ts';
+
+export type EventListener = (event: ServerEvent) => void;
+
+/** Tells whoever listens in this process what has changed. Listeners must not throw. */
+export function createEventBus() {
+  const listeners = new Set<EventListener>();
+  return {
+    publish(event: ServerEvent): void {
+      for (const listener of [...listeners]) listener(event);
+    },
+    /** Returns a function that ends the subscription. */
+    subscribe(listener: EventListener): () => void {
+      listeners.add(listener);
+      return () => listeners.delete(listener);
+    },
+    size: () => listeners.size,
+  };
+}
+
+export type EventBus = ReturnType<typeof createEventBus>;

@@ -1,0 +1,36 @@
+import { z } from 'zod';
+
+export const problemCodes = [
+  'invalid',
+  'unauthenticated',
+  'forbidden',
+  'not_found',
+  'conflict',
+  'gone',
+  'too_large',
+  'unprocessable',
+  'too_many',
+  'internal',
+  'unavailable',
+] as const;
+
+/** Problem details (RFC 9457) as every error answer carries them. */
+export const problem = z.object({
+  type: z.string(),
+  title: z.string(),
+  status: z.int(),
+  detail: z.string(),
+  code: z.enum(problemCodes),
+  requestId: z.string(),
+  issues: z
+    .array(
+      z.object({
+        path: z.string().optional(),
+        line: z.int().optional(),
+        column: z.int().optional(),
+        message: z.string(),
+      }),
+    )
+    .optional(),
+});
+export type Problem = z.infer<typeof problem>;
