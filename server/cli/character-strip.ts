@@ -12,7 +12,10 @@ const lastDigit = 16;
  * the feet below (`ˌ` asked again at an x asked before), and the end: `●` at the returned root, `⊂` where
  * none was returned.
  */
-export function characterStrip(strokes: readonly CharacterStroke[], end: { digits: number; isOpen: boolean }): string {
+export function characterStrip(
+  strokes: readonly CharacterStroke[],
+  end: { digits: number; isOpen: boolean },
+): string {
   const width = cellsPerDigit * lastDigit + 1;
   const marks = new Array<number>(width).fill(0);
   const feet = new Array<boolean>(width).fill(false);
@@ -29,7 +32,13 @@ export function characterStrip(strokes: readonly CharacterStroke[], end: { digit
   });
   const scale = [0, 4, 8, 12, 16].map((digit) => String(digit).padEnd(4 * cellsPerDigit)).join('');
   const rows = [scale.trimEnd(), `${line.join('')}  ${end.isOpen ? '⊂' : '●'}`];
-  if (feet.some(Boolean)) rows.push(feet.map((isFoot) => (isFoot ? 'ˌ' : ' ')).join('').trimEnd());
+  if (feet.some(Boolean))
+    rows.push(
+      feet
+        .map((isFoot) => (isFoot ? 'ˌ' : ' '))
+        .join('')
+        .trimEnd(),
+    );
   return rows.join('\n');
 }
 

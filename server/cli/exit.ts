@@ -8,7 +8,8 @@ export const exitCodes = { fine: 0, beyond: 1, wrong: 2 } as const;
 export function explainError(error: unknown): string {
   if (error instanceof AppError) {
     const issues = error.issues.map((issue) => {
-      const place = issue.line === undefined ? (issue.path ?? '') : `line ${issue.line}, column ${issue.column ?? 1}`;
+      const place =
+        issue.line === undefined ? (issue.path ?? '') : `line ${issue.line}, column ${issue.column ?? 1}`;
       return `  ${place === '' ? '' : `${place}: `}${issue.message}`;
     });
     return [error.message, ...issues].map(printable).join('\n');

@@ -25,8 +25,7 @@ export function formatTable<Row>(columns: readonly Column<Row>[], rows: readonly
 
 /** The text with control and bidirectional characters shown as escapes. */
 export function printable(text: string): string {
-  // biome-ignore lint/suspicious/noControlCharactersInRegex: these are the characters that must not reach a terminal
-  return text.replace(/[\u0000-\u001f\u007f-\u009f\u061c\u200e\u200f\u202a-\u202e\u2066-\u2069]/g, (character) => {
+  return text.replace(/[\p{Cc}\p{Bidi_Control}]/gu, (character) => {
     return `\\u${character.charCodeAt(0).toString(16).padStart(4, '0')}`;
   });
 }

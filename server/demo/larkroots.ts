@@ -131,7 +131,7 @@ const identity = [
 async function commitAs(folder: string, commit: DemoCommit): Promise<void> {
   const { name, email } = commit.author;
   const git = simpleGit(folder, { allowEnvironment: [...identity] }).env({
-    PATH: process.env.PATH ?? '/usr/bin:/bin',
+    PATH: '/usr/local/bin:/usr/bin:/bin:/opt/homebrew/bin',
     GIT_AUTHOR_NAME: name,
     GIT_AUTHOR_EMAIL: email,
     GIT_AUTHOR_DATE: commit.at,

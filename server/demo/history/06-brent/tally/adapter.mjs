@@ -20,11 +20,23 @@ function answer(routine) {
 serve({
   name: 'larkroots 0.3',
   solvers: {
-    secant: answer(({ f, inputs, tolerance, most, step }) => secant(f, ...inputs.starts, tolerance, most, step)),
-    newton: answer(({ f, df, inputs, tolerance, most, step }) => newton(f, df, inputs.starts[0], tolerance, most, step)),
-    bisection: answer(({ f, inputs, tolerance, most, step }) => bisection(f, ...inputs.bracket, tolerance, most, step)),
-    illinois: answer(({ f, inputs, tolerance, most, step }) => illinois(f, ...inputs.bracket, tolerance, most, step)),
-    hybrid: answer(({ f, inputs, tolerance, most, step }) => hybrid(f, ...inputs.bracket, tolerance, most, step)),
-    brent: answer(({ f, inputs, tolerance, most, step }) => brent(f, ...inputs.bracket, tolerance, most, step)),
+    secant: answer(({ f, inputs, tolerance, most, step }) =>
+      secant(f, ...inputs.starts, tolerance, most, step),
+    ),
+    newton: answer(({ f, df, inputs, tolerance, most, step }) =>
+      newton(f, df, inputs.starts[0], tolerance, most, step),
+    ),
+    bisection: answer(({ f, inputs, tolerance, most, step }) =>
+      bisection(f, ...inputs.bracket, tolerance, most, step),
+    ),
+    illinois: answer(({ f, inputs, tolerance, most, step }) =>
+      illinois(f, ...inputs.bracket, tolerance, most, step),
+    ),
+    hybrid: answer(({ f, inputs, tolerance, most, step }) =>
+      hybrid(f, ...inputs.bracket, tolerance, most, step),
+    ),
+    brent: answer(({ f, inputs, tolerance, most, step }) =>
+      brent(f, ...inputs.bracket, tolerance, most, step),
+    ),
   },
 });
