@@ -1,0 +1,39 @@
+import { Fragment } from 'react';
+
+/** A sentence in pieces: names in 600, figures in Mono, the rest as running text. */
+export interface TextPiece {
+  text: string;
+  strong?: boolean | undefined;
+  figure?: boolean | undefined;
+}
+
+export interface RichTextProps {
+  pieces: readonly TextPiece[];
+}
+
+/** Only the digits of a figure are Mono: `41 of 57` becomes two runs with plain words between. */
+function Figure({ text }: { text: string }) {
+  const parts = text.split(/([A-Za-z]{2,}(?:\s+[A-Za-z]{2,})*)/);
+  return parts.map((part, index) => {
+    if (part === '') return null;
+    // biome-ignore lint/suspicious/noArrayIndexKey: the pieces of one sentence keep their places
+    return index % 2 === 1 ? <Fragment key={index}>{part}</Fragment> : <Mono key={index} text={part} />;
+  });
+}
+
+function Mono({ text }: { text: string }) {
+  return text.trim() === '' ? text : <span className="num">{text}</span>;
+}
+
+export function RichText({ pieces }: RichTextProps) {
+  return pieces.map((piece, index) => {
+    const body = piece.figure === true ? <Figure text={piece.text} /> : piece.text;
+    // biome-ignore lint/suspicious/noArrayIndexKey: the pieces of one sentence keep their places
+    return piece.strong === true ? <b key={index}>{body}</b> : <Fragment key={index}>{body}</Fragment>;
+  });
+}
+
+/** The same sentence without its marks: for titles and text alternatives. */
+export function plainText(pieces: readonly TextPiece[]): string {
+  return pieces.map((piece) => piece.text).join('');
+}
