@@ -12,7 +12,7 @@ describe('correctDigits', () => {
     // |1.4 − √2| / √2 = 1.0050506e-2, so 1.99781 digits.
     expect(found.digits).toBeCloseTo(1.99781, 5);
     expect(found.exact).toBe(false);
-    expect(found.error).toBeCloseTo(-0.0142135623730950488, 17);
+    expect(found.error).toBeCloseTo(-0.01421356237309514, 17);
     expect(found.absolute).toBe(false);
   });
 
