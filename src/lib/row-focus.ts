@@ -7,8 +7,9 @@ export function moveRowFocus(step: number, attribute = 'data-row-link'): void {
     (link) => link.offsetParent !== null,
   );
   if (links.length === 0) return;
-  const at = links.findIndex((link) => link === document.activeElement);
-  const next = at < 0 ? (step > 0 ? 0 : links.length - 1) : Math.min(links.length - 1, Math.max(0, at + step));
+  const at = links.findIndex((link) => link.matches(':focus'));
+  const next =
+    at < 0 ? (step > 0 ? 0 : links.length - 1) : Math.min(links.length - 1, Math.max(0, at + step));
   links[next]?.focus();
   links[next]?.scrollIntoView({ block: 'nearest' });
 }

@@ -8,7 +8,7 @@ function isWriting(target: EventTarget | null): boolean {
 }
 
 /**
- * Single keys of a page. They are silent while somebody writes in a field (except Escape) and while a
+ * Single keys of a page. They are silent while somebody writes in a field and while a
  * modifier is held, so that they never take a key away from the browser or a screen reader.
  */
 export function useKeys(keys: KeyMap): void {
@@ -19,7 +19,7 @@ export function useKeys(keys: KeyMap): void {
   useEffect(() => {
     function handleKeyDown(event: KeyboardEvent): void {
       if (event.defaultPrevented || event.ctrlKey || event.metaKey || event.altKey) return;
-      if (isWriting(event.target) && event.key !== 'Escape') return;
+      if (isWriting(event.target)) return;
       const run = latest.current[event.key];
       if (run === undefined) return;
       event.preventDefault();

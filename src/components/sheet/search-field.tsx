@@ -11,9 +11,6 @@ export function SearchField() {
   const [text, setText] = useState('');
   useKeys({
     '/': () => input.current?.focus(),
-    Escape: () => {
-      if (document.activeElement === input.current) input.current?.blur();
-    },
   });
   function handleSubmit(event: FormEvent): void {
     event.preventDefault();
@@ -30,6 +27,9 @@ export function SearchField() {
           type="search"
           value={text}
           onChange={(event) => setText(event.target.value)}
+          onKeyDown={(event) => {
+            if (event.key === 'Escape') event.currentTarget.blur();
+          }}
           aria-label="Search: case, solver, commit"
           aria-keyshortcuts="/"
           placeholder="Case, solver, commit"

@@ -19,7 +19,12 @@ export function VerdictBlock({ sign, colour, note, sentence, lead, children, act
   return (
     <section className="ledger entry verdict" aria-label="What was found">
       <div className="entry-side">
-        <div className={classNames('sign flex items-center gap-2 pt-[7px] max-wide:pt-0', colour ?? 'text-ink-2')}>
+        <div
+          className={classNames(
+            'sign flex items-center gap-2 pt-[7px] max-wide:pt-0',
+            colour ?? 'text-ink-2',
+          )}
+        >
           {sign}
         </div>
         {note !== undefined && <div className="pt-1.5">{note}</div>}

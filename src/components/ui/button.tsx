@@ -15,7 +15,14 @@ const plain =
   'border-rule-strong hover:border-ink hover:bg-sunk disabled:cursor-not-allowed disabled:border-dashed disabled:border-rule-strong disabled:bg-transparent disabled:text-ink-3';
 const main = 'is-ink border-ink bg-ink text-paper no-underline';
 
-export function Button({ isMain = false, hotkey, children, className, type = 'button', ...rest }: ButtonProps) {
+export function Button({
+  isMain = false,
+  hotkey,
+  children,
+  className,
+  type = 'button',
+  ...rest
+}: ButtonProps) {
   return (
     <button
       type={type}
@@ -39,7 +46,11 @@ export interface ButtonLinkProps {
 /** A link that looks like a button: it leads somewhere, so it is a link. */
 export function ButtonLink({ to, isMain = false, hotkey, children }: ButtonLinkProps) {
   return (
-    <Link to={to} aria-keyshortcuts={hotkey} className={classNames(shape, 'no-underline', isMain ? main : plain)}>
+    <Link
+      to={to}
+      aria-keyshortcuts={hotkey}
+      className={classNames(shape, 'no-underline', isMain ? main : plain)}
+    >
       {children}
       {hotkey !== undefined && <Kbd>{hotkey}</Kbd>}
     </Link>

@@ -25,12 +25,16 @@ function Mono({ text }: { text: string }) {
   return text.trim() === '' ? text : <span className="num">{text}</span>;
 }
 
+function Piece({ piece }: { piece: TextPiece }) {
+  const body = piece.figure === true ? <Figure text={piece.text} /> : piece.text;
+  return piece.strong === true ? <b>{body}</b> : body;
+}
+
 export function RichText({ pieces }: RichTextProps) {
-  return pieces.map((piece, index) => {
-    const body = piece.figure === true ? <Figure text={piece.text} /> : piece.text;
+  return pieces.map((piece, index) => (
     // biome-ignore lint/suspicious/noArrayIndexKey: the pieces of one sentence keep their places
-    return piece.strong === true ? <b key={index}>{body}</b> : <Fragment key={index}>{body}</Fragment>;
-  });
+    <Piece key={index} piece={piece} />
+  ));
 }
 
 /** The same sentence without its marks: for titles and text alternatives. */

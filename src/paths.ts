@@ -1,0 +1,21 @@
+/** Every address of the client, once. Views keep their filters in the query string, built by the pages. */
+const part = encodeURIComponent;
+
+export const paths = {
+  home: () => '/',
+  search: (text: string) => `/search?q=${part(text)}`,
+  libraries: () => '/libraries',
+  library: (slug: string) => `/libraries/${part(slug)}`,
+  build: (id: number) => `/builds/${id}`,
+  run: (id: number) => `/runs/${id}`,
+  solve: (id: number) => `/solves/${id}`,
+  comparison: (candidate: number, against?: string) =>
+    against === undefined
+      ? `/runs/${candidate}/comparison`
+      : `/runs/${candidate}/comparison?against=${part(against)}`,
+  suites: () => '/suites',
+  suite: (slug: string, revision?: number) =>
+    revision === undefined ? `/suites/${part(slug)}` : `/suites/${part(slug)}?revision=${revision}`,
+  suiteCase: (slug: string, caseId: string, revision?: number) =>
+    `/suites/${part(slug)}/cases/${part(caseId)}${revision === undefined ? '' : `?revision=${revision}`}`,
+} as const;
