@@ -22,8 +22,8 @@ export default {
       same: 'var(--same)',
     },
     fontFamily: {
-      sans: ["'Fira Sans'", "'Source Sans 3'", "'Noto Sans'", 'system-ui', 'sans-serif'],
-      mono: ["'Fira Mono'", "'DejaVu Sans Mono'", 'ui-monospace', 'monospace'],
+      sans: ['var(--sans)'],
+      mono: ['var(--mono)'],
     },
     fontSize: {
       verdict: ['26px', { lineHeight: '34px', letterSpacing: '-0.008em' }],

@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import { keepScheme, readScheme, type Scheme, schemes } from '../../lib/scheme.ts';
 
-const words: Record<Scheme, string> = { light: 'light sheet', dark: 'dark sheet', system: 'as the system' };
+const words: Record<Scheme, string> = { light: 'light', dark: 'dark', system: 'system' };
 
 /** Light, dark, or as the system says; kept in this browser. */
 export function SchemeSwitch() {

@@ -20,7 +20,7 @@ export function SearchField() {
     <search>
       <form
         onSubmit={handleSubmit}
-        className="flex w-[210px] items-center justify-between gap-2 border-b border-rule-strong px-0.5 py-[3px] focus-within:border-ink max-wide:w-[168px]"
+        className="flex w-[210px] items-center justify-between gap-2 border-b border-rule-strong px-0.5 py-[3px] focus-within:border-ink max-wide:w-[112px]"
       >
         <input
           ref={input}

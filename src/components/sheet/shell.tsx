@@ -22,20 +22,15 @@ export function Shell() {
       <a href="#sheet" className="skip">
         To the sheet
       </a>
-      <header className="head ledger ledger-end items-end border-b-2 border-ink pb-2.5 pt-3.5 max-wide:pb-0">
-        <div className="flex items-center justify-between gap-3">
-          <Link
-            to={paths.libraries()}
-            className="flex items-center gap-[9px] text-[17px] font-medium tracking-[-0.005em] no-underline"
-          >
-            <BrandMark />
-            <span>Tallyroot</span>
-          </Link>
-          <div className="head-tools wide:hidden">
-            <SchemeSwitch />
-          </div>
-        </div>
-        <nav aria-label="Main" className="max-wide:overflow-x-auto">
+      <header className="head ledger ledger-end items-end max-wide:grid-cols-[minmax(0,1fr)_auto]! border-b-2 border-ink pb-2.5 pt-3.5 max-wide:pb-0">
+        <Link
+          to={paths.libraries()}
+          className="flex items-center gap-[9px] text-[17px] font-medium tracking-[-0.005em] no-underline"
+        >
+          <BrandMark />
+          <span>Tallyroot</span>
+        </Link>
+        <nav aria-label="Main" className="max-wide:col-span-2 max-wide:row-start-2 max-wide:overflow-x-auto">
           <ul className="flex gap-5.5 max-wide:gap-4">
             {navWords.map((word) => (
               <li key={word.to}>
@@ -49,11 +44,9 @@ export function Shell() {
             ))}
           </ul>
         </nav>
-        <div className="head-tools flex items-center gap-4.5 text-ink-2 max-wide:row-start-2 max-wide:pt-1">
+        <div className="head-tools flex items-center gap-4.5 text-ink-2 max-wide:gap-3">
           <SearchField />
-          <div className="max-wide:hidden">
-            <SchemeSwitch />
-          </div>
+          <SchemeSwitch />
         </div>
       </header>
       <Outlet />
