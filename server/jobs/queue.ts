@@ -10,6 +10,9 @@ export type JobKind = Job['kind'];
 /** How long a claim holds without a heartbeat. */
 export const leaseMs = 15_000;
 
+/** Claims in a row that brought nothing before a job is given up: it may be what kills the server. */
+export const maxAttempts = 20;
+
 /** The work is no longer this process's own: its lease ran out, or it was cancelled. */
 export class LeaseLost extends Error {
   constructor(job: number) {
@@ -57,6 +60,10 @@ export function createQueue(client: DatabaseClient, clock: Clock, owner = create
     /** Renews the lease; throws where the job is not held any more. Also called before results are stored. */
     hold(job: number): void {
       if (renew.run(clock() + leaseMs, job, owner).changes !== 1) throw new LeaseLost(job);
+    },
+    /** Something was stored: the job is worth going on with, however often its owner dies. */
+    progressed(job: number): void {
+      db.update(jobs).set({ attempts: 0 }).where(eq(jobs.id, job)).run();
     },
     finish: (job: number) => end(job, { status: 'done', finishedAt: clock() }),
     fail: (job: number, error: string) => end(job, { status: 'failed', error, finishedAt: clock() }),

@@ -11,7 +11,7 @@ export const jobs = sqliteTable(
     kind: text('kind', { enum: ['run'] }).notNull(),
     subject: integer('subject').notNull(),
     status: text('status', { enum: ['queued', 'running', 'done', 'failed', 'cancelled'] }).notNull(),
-    /** How often it was claimed. */
+    /** How often it was claimed since it last stored something. */
     attempts: integer('attempts').notNull(),
     owner: text('owner'),
     leaseUntil: time('lease_until'),

@@ -42,7 +42,13 @@ export const runs = sqliteTable(
     baseRunId: integer('base_run_id'),
     baseReferenceId: integer('base_reference_id'),
     planned: integer('planned').notNull(),
+    // Counted in the transaction that stores the solves, so that lists of runs need not read them.
+    stored: integer('stored').notNull(),
+    solved: integer('solved').notNull(),
+    evaluations: integer('evaluations').notNull(),
     toConfirm: integer('to_confirm').notNull(),
+    confirmed: integer('confirmed').notNull(),
+    unsteady: integer('unsteady').notNull(),
     environment: json('environment', environment),
     adapterText: text('adapter_text'),
     log: text('log').notNull(),

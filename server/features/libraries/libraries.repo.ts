@@ -1,0 +1,48 @@
+import { asc, eq, gt, sql } from 'drizzle-orm';
+import { AppError } from '../../../shared/errors.ts';
+import { type Db, isConstraintError } from '../../db/client.ts';
+import { builds, libraries, solvers } from '../../db/schema/libraries.ts';
+import { runs } from '../../db/schema/runs.ts';
+
+export type LibraryRow = typeof libraries.$inferSelect;
+
+const counts = {
+  solverCount: sql<number>`(select count(*) from ${solvers} where ${solvers.libraryId} = ${libraries.id} and ${solvers.declared})`,
+  buildCount: sql<number>`(select count(*) from ${builds} where ${builds.libraryId} = ${libraries.id})`,
+  runCount: sql<number>`(select count(*) from ${runs} where ${runs.libraryId} = ${libraries.id})`,
+};
+
+export function createLibrariesRepo(db: Db) {
+  return {
+    insert(row: typeof libraries.$inferInsert): LibraryRow {
+      try {
+        return db.insert(libraries).values(row).returning().get();
+      } catch (error) {
+        if (!isConstraintError(error, 'UNIQUE')) throw error;
+        throw new AppError('conflict', `There is a library “${row.slug}” already.`, {
+          issues: [{ path: 'slug', message: 'taken' }],
+          cause: error,
+        });
+      }
+    },
+    find: (slug: string): LibraryRow | undefined =>
+      db.select().from(libraries).where(eq(libraries.slug, slug)).get(),
+    findById: (id: number): LibraryRow | undefined =>
+      db.select().from(libraries).where(eq(libraries.id, id)).get(),
+    findCounted: (slug: string) =>
+      db
+        .select({ library: libraries, ...counts })
+        .from(libraries)
+        .where(eq(libraries.slug, slug))
+        .get(),
+    /** By slug, from A to Z. */
+    listQuery(options: { after?: string | undefined; limit: number }) {
+      return db
+        .select({ library: libraries, ...counts })
+        .from(libraries)
+        .where(options.after === undefined ? undefined : gt(libraries.slug, options.after))
+        .orderBy(asc(libraries.slug))
+        .limit(options.limit);
+    },
+  };
+}
