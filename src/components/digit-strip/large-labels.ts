@@ -1,4 +1,5 @@
-import type { StripEvent, StripLayout } from './strip-layout.ts';
+import type { StripEvent } from '../../../shared/schemas/strips.ts';
+import type { StripLayout } from './strip-layout.ts';
 
 export interface StripLabel {
   x: number;

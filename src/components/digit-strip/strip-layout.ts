@@ -1,13 +1,5 @@
+import type { StripEvent } from '../../../shared/schemas/strips.ts';
 import type { Outcome } from '../../../shared/schemas/words.ts';
-
-/** One line of a path as the strip needs it. */
-export interface StripEvent {
-  kind: 'f' | 'df' | 'd2f' | 'step';
-  /** Correct digits of its x; null where its x is not finite. */
-  digits: number | null;
-  /** Index of the first event of the same kind at the bit-identical x, or null. */
-  repeatOf: number | null;
-}
 
 export interface StripInput {
   events: readonly StripEvent[];

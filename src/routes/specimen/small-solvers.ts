@@ -1,4 +1,5 @@
-import type { StripEvent, StripInput } from '../../components/digit-strip/strip-layout.ts';
+import type { StripEvent } from '../../../shared/schemas/strips.ts';
+import type { StripInput } from '../../components/digit-strip/strip-layout.ts';
 
 /**
  * Small solvers that really run, so that samples and tests of the drawings show measured paths. Each asks

@@ -34,7 +34,7 @@ const cycle = record(newton, problems.twoCycle, [0]);
 
 describe('change marks', () => {
   it('give each of the fourteen changes a shape of its own', () => {
-    const shapes = changes.map((change) => renderToStaticMarkup(<>{changeShapes[change]}</>));
+    const shapes = changes.map((change) => renderToStaticMarkup(changeShapes[change]));
     expect(shapes).toHaveLength(14);
     expect(new Set(shapes).size).toBe(14);
   });
@@ -55,7 +55,7 @@ describe('change marks', () => {
     const dash = renderToStaticMarkup(<NotApplicableMark title="no-root: not applicable" />);
     expect(dash).toContain('aria-label="no-root: not applicable"');
     for (const change of changes) {
-      expect(renderToStaticMarkup(<>{changeShapes[change]}</>)).not.toContain('M6 8h4');
+      expect(renderToStaticMarkup(changeShapes[change])).not.toContain('M6 8h4');
     }
   });
 });
@@ -66,7 +66,7 @@ describe('verdict signs', () => {
     expect(new Set(drawn.map((markup) => markup.replace(/data-verdict="[^"]*"|<\/svg>.*$/g, ''))).size).toBe(
       3,
     );
-    verdicts.forEach((verdict, index) => expect(drawn[index]).toContain(`</svg>${verdict}`));
+    for (const [index, verdict] of verdicts.entries()) expect(drawn[index]).toContain(`</svg>${verdict}`);
   });
 });
 
@@ -201,7 +201,7 @@ describe('large strip', () => {
     const layout = layOutStrip(kept, { x0: 112, pitch: 20, leftStep: 7 });
     const labels = labelStrokes(layout, numberEvaluations(kept.events));
     const at = labels.map((label) => label.x).toSorted((a, b) => a - b);
-    at.slice(1).forEach((x, index) => expect(x - (at[index] ?? 0)).toBeGreaterThanOrEqual(9));
+    for (const [index, x] of at.slice(1).entries()) expect(x - (at[index] ?? 0)).toBeGreaterThanOrEqual(9);
     expect(labels.map((label) => label.text)).toContain(
       String((layout.strokes.at(-1)?.events[0] ?? Number.NaN) + 1),
     );

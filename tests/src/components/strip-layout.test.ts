@@ -1,10 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import {
-  layOutStrip,
-  rowScale,
-  type StripEvent,
-  type StripInput,
-} from '../../../src/components/digit-strip/strip-layout.ts';
+import type { StripEvent } from '../../../shared/schemas/strips.ts';
+import { layOutStrip, rowScale, type StripInput } from '../../../src/components/digit-strip/strip-layout.ts';
 import {
   bisection,
   newton,
