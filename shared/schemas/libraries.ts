@@ -7,7 +7,11 @@ export const createLibraryBody = z.strictObject({
   name: z.string().trim().min(1).max(100),
   description: z.string().trim().max(2000).default(''),
   /** Where its source lives, for people to read; null where nowhere. */
-  homepage: z.url({ protocol: /^https?$/ }).max(500).nullable().default(null),
+  homepage: z
+    .url({ protocol: /^https?$/ })
+    .max(500)
+    .nullable()
+    .default(null),
 });
 export type CreateLibraryBody = z.infer<typeof createLibraryBody>;
 

@@ -107,7 +107,15 @@ export const runsQuery = pageQuery.extend({
 });
 export type RunsQuery = z.infer<typeof runsQuery>;
 
-export const solveSorts = ['solver', 'case', 'evaluations', 'iterations', 'digits', 'order', 'elapsed'] as const;
+export const solveSorts = [
+  'solver',
+  'case',
+  'evaluations',
+  'iterations',
+  'digits',
+  'order',
+  'elapsed',
+] as const;
 
 /** Repeated `outcome` parameters mean any of them. `text` is looked for in case names and equations. */
 export const solvesQuery = pageQuery.extend({

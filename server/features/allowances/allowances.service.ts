@@ -1,6 +1,9 @@
 import type { z } from 'zod';
 import { AppError } from '../../../shared/errors.ts';
-import type { AllowanceRevisionView, setAllowancesBody } from '../../../shared/schemas/allowance-revisions.ts';
+import type {
+  AllowanceRevisionView,
+  setAllowancesBody,
+} from '../../../shared/schemas/allowance-revisions.ts';
 import type { Page, PageQuery } from '../../../shared/schemas/paging.ts';
 import { type DatabaseClient, inTransaction } from '../../db/client.ts';
 import { numberCursor, toPage } from '../../db/cursor.ts';

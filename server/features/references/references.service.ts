@@ -69,7 +69,10 @@ export function createReferencesService(deps: {
           issues: [{ path: 'run', message: 'another library' }],
         });
       if (run.status !== 'finished' || run.environment === null)
-        throw new AppError('conflict', `Run ${run.id} is ${run.status}; only a finished run can be a reference.`);
+        throw new AppError(
+          'conflict',
+          `Run ${run.id} is ${run.status}; only a finished run can be a reference.`,
+        );
       const platform = platformOf(run.environment);
       const id = inTransaction(deps.client, () => {
         if (repo.findChain(library.id, run.suiteId, platform))

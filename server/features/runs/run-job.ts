@@ -60,7 +60,12 @@ export function createRunJob(deps: RunJobDeps): JobHandler {
   }
 
   /** Returns why it stopped early, or null. */
-  async function measureRun(job: Job, run: RunRow, keys: RunKeys, outer: AbortSignal): Promise<string | null> {
+  async function measureRun(
+    job: Job,
+    run: RunRow,
+    keys: RunKeys,
+    outer: AbortSignal,
+  ): Promise<string | null> {
     const failure = new AbortController();
     const signal = AbortSignal.any([outer, failure.signal]);
     const done = new Set(
@@ -163,8 +168,7 @@ export function createRunJob(deps: RunJobDeps): JobHandler {
       });
     try {
       await work(job, run, signal);
-      if (signal.reason === shuttingDown)
-        runs.updateWhile(run.id, ['running'], { status: 'queued' });
+      if (signal.reason === shuttingDown) runs.updateWhile(run.id, ['running'], { status: 'queued' });
     } catch (error) {
       if (error instanceof LeaseLost || signal.reason === noLongerHeld) return;
       const isExpected = error instanceof AppError;

@@ -68,7 +68,11 @@ function presentRunSolver(solver: RunSolverRow, counts: OutcomeCount[]): RunSolv
   return view;
 }
 
-export function presentRunDetail(named: NamedRun, solvers: RunSolverRow[], counts: OutcomeCount[]): RunDetail {
+export function presentRunDetail(
+  named: NamedRun,
+  solvers: RunSolverRow[],
+  counts: OutcomeCount[],
+): RunDetail {
   const { environment, adapterText, log } = named.run;
   const views = solvers.map((solver) =>
     presentRunSolver(

@@ -97,8 +97,7 @@ export function createRunsService(deps: RunsServiceDeps) {
           issues: [{ path: 'against.run', message: 'another library or suite' }],
         });
     }
-    if (body.against?.kind === 'reference')
-      deps.requireReference(body.against.revision, libraryId, suiteId);
+    if (body.against?.kind === 'reference') deps.requireReference(body.against.revision, libraryId, suiteId);
     return body.against;
   }
 

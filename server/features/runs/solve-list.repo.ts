@@ -69,7 +69,10 @@ export function createSolveListRepo(client: DatabaseClient) {
     /** Rows with the cursor that stands for each. */
     list(filter: SolveFilter): { cursor: SolveCursor; row: SolveRow }[] {
       const { sql, parameters } = solveListSql(filter);
-      const rows = client.sqlite.prepare<unknown[], SolveRow>(sql).raw().all(...parameters);
+      const rows = client.sqlite
+        .prepare<unknown[], SolveRow>(sql)
+        .raw()
+        .all(...parameters);
       return rows.map((row) => ({ cursor: sortKeys[filter.sort].of(row), row }));
     },
   };

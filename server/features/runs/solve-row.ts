@@ -1,11 +1,5 @@
 import type { Remark, SolveRecord } from '../../../shared/schemas/solve.ts';
-import {
-  iterationsFromCode,
-  orderKindCode,
-  orderStatusCode,
-  outcomeCode,
-  wordOf,
-} from '../../db/codes.ts';
+import { iterationsFromCode, orderKindCode, orderStatusCode, outcomeCode, wordOf } from '../../db/codes.ts';
 
 /**
  * How a solve lies in its table: the names of the columns after the key, and a tuple of values in that

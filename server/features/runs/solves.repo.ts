@@ -54,9 +54,7 @@ export function createSolvesRepo(client: DatabaseClient) {
       `SELECT ${solveSelect} FROM solves WHERE run_id = ? ORDER BY solver, case_id, start`,
     )
     .raw();
-  const one = sqlite
-    .prepare<[number], SolveRow>(`SELECT ${solveSelect} FROM solves WHERE id = ?`)
-    .raw();
+  const one = sqlite.prepare<[number], SolveRow>(`SELECT ${solveSelect} FROM solves WHERE id = ?`).raw();
   const runOf = sqlite.prepare<[number], number>('SELECT run_id FROM solves WHERE id = ?').pluck();
   const keys = sqlite
     .prepare<[number], [solver: number, caseId: number, start: number]>(

@@ -10,7 +10,14 @@ export function createSolversRepo(db: Db) {
     /** Takes over what a build declares; solvers that it leaves out are kept, as no longer declared. */
     declare(libraryId: number, buildId: number, declarations: SolverDeclaration[], now: number): void {
       for (const declaration of declarations) {
-        const row = { libraryId, buildId, name: declaration.name, declaration, declared: true, updatedAt: now };
+        const row = {
+          libraryId,
+          buildId,
+          name: declaration.name,
+          declaration,
+          declared: true,
+          updatedAt: now,
+        };
         db.insert(solvers)
           .values(row)
           .onConflictDoUpdate({ target: [solvers.libraryId, solvers.name], set: row })

@@ -76,8 +76,7 @@ export function createSuitesService(deps: {
         const known = repo.find(content.id);
         if (known && known.builtIn !== added.builtIn)
           throw new AppError('conflict', `There is a suite “${content.id}” already.`);
-        const suite =
-          known ?? repo.insertSuite({ slug: content.id, builtIn: added.builtIn, createdAt: now });
+        const suite = known ?? repo.insertSuite({ slug: content.id, builtIn: added.builtIn, createdAt: now });
         const current = repo.findCurrent(suite.slug)?.revision;
         const same = repo.findByHash(suite.id, content.revision);
         if (same && (added.builtIn || same.id === current?.id)) return { revision: same, isNew: false };

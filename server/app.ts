@@ -1,0 +1,70 @@
+import express, { type Express, type RequestHandler, Router } from 'express';
+import type { Logger } from 'pino';
+import { allowancesRoutes } from './features/allowances/allowances.routes.ts';
+import { auditRoutes } from './features/audit/audit.routes.ts';
+import { buildsRoutes } from './features/builds/builds.routes.ts';
+import { librariesRoutes } from './features/libraries/libraries.routes.ts';
+import { referencesRoutes } from './features/references/references.routes.ts';
+import { runsRoutes } from './features/runs/runs.routes.ts';
+import type { Services } from './features/services.ts';
+import { suitesRoutes } from './features/suites/suites.routes.ts';
+import { errorHandler, noSuchRoute } from './http/error-handler.ts';
+import { hostCheck, originCheck } from './http/origin-check.ts';
+import { requestId } from './http/request-id.ts';
+import { securityHeaders } from './http/security-headers.ts';
+import { session } from './http/session.ts';
+
+export interface AppDeps {
+  services: Services;
+  logger: Logger;
+  /** Host names, besides localhost and addresses in figures, under which the server is reached. */
+  allowedHosts: readonly string[];
+  isDevelopment?: boolean;
+  /** Logs each request; left out in tests. */
+  requestLog?: RequestHandler;
+  /** Serves the client after the API. */
+  site?: RequestHandler[];
+}
+
+const bodyLimit = '256kb';
+
+function apiRouter(services: Services): Router {
+  const api = Router();
+  api.use((_request, response, next) => {
+    response.set('Cache-Control', 'no-store');
+    next();
+  });
+  api.use(originCheck);
+  api.use(express.json({ limit: bodyLimit, strict: true, type: ['application/json'] }));
+  api.use(session);
+  api.get('/about', (_request, response) => {
+    response.json({ name: 'Tallyroot', environment: services.environment });
+  });
+  api.use(librariesRoutes(services.libraries, services.solvers));
+  api.use(buildsRoutes(services.builds));
+  api.use(suitesRoutes(services.suites));
+  api.use(allowancesRoutes(services.allowances));
+  api.use(runsRoutes(services.runs, services.solves, services.bus));
+  api.use(referencesRoutes(services.references));
+  api.use(auditRoutes(services.audit));
+  api.use(noSuchRoute);
+  return api;
+}
+
+/** The whole application, not listening. */
+export function createApp(deps: AppDeps): Express {
+  const app = express();
+  app.disable('x-powered-by');
+  // Our own tags on what is immutable; a hash over every other body is work for nothing.
+  app.set('etag', false);
+  app.set('query parser', 'simple');
+  app.use(requestId);
+  if (deps.requestLog) app.use(deps.requestLog);
+  app.use(securityHeaders({ isDevelopment: deps.isDevelopment ?? false }));
+  app.use(hostCheck(deps.allowedHosts));
+  app.use('/api', apiRouter(deps.services));
+  for (const handler of deps.site ?? []) app.use(handler);
+  app.use(noSuchRoute);
+  app.use(errorHandler(deps.logger));
+  return app;
+}

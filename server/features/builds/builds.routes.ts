@@ -1,0 +1,31 @@
+import { Router } from 'express';
+import { z } from 'zod';
+import { registerBuildBody } from '../../../shared/schemas/builds.ts';
+import { pageQuery, rowId, slug } from '../../../shared/schemas/paging.ts';
+import { parseBody, parseRequest } from '../../http/parse-request.ts';
+import { actorOf } from '../../http/session.ts';
+import type { BuildsService } from './builds.service.ts';
+
+const inLibrary = z.object({ library: slug });
+const byId = z.object({ build: rowId });
+
+export function buildsRoutes(builds: BuildsService): Router {
+  const router = Router();
+  router.get('/libraries/:library/builds', (request, response) => {
+    const { library } = parseRequest(inLibrary, request.params, 'address');
+    response.json(builds.list(library, parseRequest(pageQuery, request.query, 'query')));
+  });
+  router.post('/libraries/:library/builds', async (request, response) => {
+    const { library } = parseRequest(inLibrary, request.params, 'address');
+    const body = parseBody(registerBuildBody, request);
+    const { build, isNew } = await builds.registerFolder(actorOf(response), library, body);
+    response
+      .status(isNew ? 201 : 200)
+      .location(`/api/builds/${build.id}`)
+      .json(build);
+  });
+  router.get('/builds/:build', (request, response) => {
+    response.json(builds.get(parseRequest(byId, request.params, 'address').build));
+  });
+  return router;
+}

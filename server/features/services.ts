@@ -1,0 +1,146 @@
+import type { Environment } from '../../shared/schemas/measurement.ts';
+import { solveKey } from '../../shared/schemas/solve.ts';
+import type { DatabaseClient } from '../db/client.ts';
+import { type Clock, systemClock } from '../jobs/clock.ts';
+import { createEventBus } from '../jobs/event-bus.ts';
+import { createJobRunner, type JobRunnerOptions } from '../jobs/job-runner.ts';
+import { createQueue } from '../jobs/queue.ts';
+import { createAllowancesService } from './allowances/allowances.service.ts';
+import { createAuditService } from './audit/audit.service.ts';
+import type { ReadManifest } from './builds/build-folder.ts';
+import { createBuildsService } from './builds/builds.service.ts';
+import { createLibrariesService } from './libraries/libraries.service.ts';
+import { createReferencesRepo } from './references/references.repo.ts';
+import { createReferencesService, platformOf } from './references/references.service.ts';
+import type { BaseSolves } from './runs/confirm-run.ts';
+import type { Measuring } from './runs/measuring.ts';
+import { createRunJob } from './runs/run-job.ts';
+import { createRunSolves } from './runs/run-solves.ts';
+import { createRunsRepo, type RunRow } from './runs/runs.repo.ts';
+import { createRunsService } from './runs/runs.service.ts';
+import { createSolveListRepo } from './runs/solve-list.repo.ts';
+import { createSolvesRepo } from './runs/solves.repo.ts';
+import { createSolvesService } from './runs/solves.service.ts';
+import { createSolversService } from './solvers/solvers.service.ts';
+import { createSuitesService } from './suites/suites.service.ts';
+
+export interface ServicesOptions {
+  client: DatabaseClient;
+  measuring: Measuring;
+  readManifest: ReadManifest;
+  /** Where this process measures, and with what. */
+  environment: Environment;
+  lanes: number;
+  onJobError: JobRunnerOptions['onError'];
+  clock?: Clock;
+  pollMs?: number;
+}
+
+/**
+ * Everything that the product can do, for the web server, the command line and the demo alike. The job
+ * runner works on runs once it is started; without it they wait for another process.
+ */
+export function createServices(options: ServicesOptions) {
+  const { client, measuring, environment } = options;
+  const clock = options.clock ?? systemClock;
+  const { db } = client;
+  const bus = createEventBus();
+  const queue = createQueue(client, clock);
+  const base = { client, clock, bus };
+
+  const audit = createAuditService(db, clock);
+  const libraries = createLibrariesService({ ...base, audit });
+  const solvers = createSolversService(db, libraries);
+  const builds = createBuildsService({ ...base, audit, libraries, readManifest: options.readManifest });
+  const suites = createSuitesService({ ...base, audit });
+  const allowances = createAllowancesService({ ...base, audit, libraries });
+
+  const runsRepo = createRunsRepo(client);
+  const solvesRepo = createSolvesRepo(client);
+  const runSolves = createRunSolves({ runs: runsRepo, solves: solvesRepo, suites });
+  const references = createReferencesService({
+    ...base,
+    audit,
+    libraries,
+    suites,
+    runs: runsRepo,
+    runSolves,
+    repo: createReferencesRepo(client),
+    platform: platformOf(environment),
+  });
+  const runs = createRunsService({
+    ...base,
+    queue,
+    audit,
+    libraries,
+    builds,
+    suites,
+    runs: runsRepo,
+    measuring,
+    lanes: options.lanes,
+    currentReference: references.current,
+    requireReference: references.requireFor,
+    wakeRunner: () => jobRunner.wake(),
+    abortRun: (id) => jobRunner.abortSubject('run', id),
+  });
+  const solves = createSolvesService({
+    runs,
+    runSolves,
+    solves: solvesRepo,
+    lists: createSolveListRepo(client),
+    decodePath: measuring.decodePath,
+  });
+
+  function readBase(run: RunRow): BaseSolves | null {
+    if (run.baseRunId !== null) {
+      const solvesOfBase = runSolves.readAll(runs.requireRun(run.baseRunId));
+      return new Map(solvesOfBase.map((solve) => [solveKey(solve), solve]));
+    }
+    if (run.baseReferenceId !== null) {
+      const entries = references.readEntries(run.baseReferenceId);
+      return new Map(entries.map((entry) => [solveKey(entry), entry.solve]));
+    }
+    return null;
+  }
+
+  const jobRunner = createJobRunner({
+    queue,
+    handlers: {
+      run: createRunJob({
+        client,
+        clock,
+        queue,
+        runs: runsRepo,
+        solves: solvesRepo,
+        runSolves,
+        builds,
+        suites,
+        measuring,
+        environment,
+        readBase,
+        publish: runs.publish,
+      }),
+    },
+    onError: options.onJobError,
+    pollMs: options.pollMs ?? 1000,
+  });
+
+  return {
+    audit,
+    libraries,
+    solvers,
+    builds,
+    suites,
+    allowances,
+    references,
+    runs,
+    solves,
+    runSolves,
+    bus,
+    queue,
+    jobRunner,
+    environment,
+  };
+}
+
+export type Services = ReturnType<typeof createServices>;
