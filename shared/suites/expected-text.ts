@@ -23,7 +23,11 @@ function orList(values: readonly unknown[]): string {
   return `${texts.slice(0, -1).join(', ')} or ${texts.at(-1)}`;
 }
 
-function sizeText(issue: { origin: string; inclusive?: boolean }, bound: number | bigint, isMinimum: boolean): string {
+function sizeText(
+  issue: { origin: string; inclusive?: boolean },
+  bound: number | bigint,
+  isMinimum: boolean,
+): string {
   const extent = isMinimum ? 'at least' : 'at most';
   if (issue.origin === 'string') return `${extent} ${bound} characters were expected`;
   if (issue.origin === 'array') return `${extent} ${bound} entries were expected`;

@@ -1,4 +1,15 @@
-import { isAlias, isMap, isScalar, isSeq, Lexer, LineCounter, type Node, Parser, parseDocument, Scalar } from 'yaml';
+import {
+  isAlias,
+  isMap,
+  isScalar,
+  isSeq,
+  Lexer,
+  LineCounter,
+  type Node,
+  Parser,
+  parseDocument,
+  Scalar,
+} from 'yaml';
 import type { Issue } from '../errors.ts';
 
 export type YamlPath = readonly (string | number)[];
@@ -48,7 +59,11 @@ function refuseEarly(text: string, limits: YamlLimits, lines: LineCounter): Issu
     for (const _ of parser.next(lexeme));
     if (parser.stack.length > limits.depth * 2 + 2) {
       const at = lines.linePos(parser.offset);
-      return { line: at.line, column: at.col, message: `Nesting deeper than ${limits.depth} levels is refused.` };
+      return {
+        line: at.line,
+        column: at.col,
+        message: `Nesting deeper than ${limits.depth} levels is refused.`,
+      };
     }
   }
   return null;
@@ -67,7 +82,12 @@ export function readYaml(text: string, limits: YamlLimits, exactKeys: ReadonlySe
   const early = refuseEarly(text, limits, lines);
   if (early !== null) return { value: undefined, positions, issues: [early] };
 
-  const document = parseDocument(text, { schema: 'core', uniqueKeys: false, prettyErrors: false, stringKeys: true });
+  const document = parseDocument(text, {
+    schema: 'core',
+    uniqueKeys: false,
+    prettyErrors: false,
+    stringKeys: true,
+  });
   for (const error of document.errors.slice(0, issueCap)) {
     const at = lines.linePos(error.pos[0]);
     issues.push({ line: at.line, column: at.col, message: `This is no valid YAML: ${error.message}.` });
@@ -99,8 +119,15 @@ export function readYaml(text: string, limits: YamlLimits, exactKeys: ReadonlySe
       }
       const name = String(pair.key.value);
       if (name === '__proto__') report(pair.key, 'This key is refused.');
-      else if (Object.hasOwn(result, name)) report(pair.key, `The key ${JSON.stringify(name)} stands here twice.`);
-      else result[name] = walk(pair.value, [...path, name], pair.key.range?.[0] ?? 0, isExact || exactKeys.has(name));
+      else if (Object.hasOwn(result, name))
+        report(pair.key, `The key ${JSON.stringify(name)} stands here twice.`);
+      else
+        result[name] = walk(
+          pair.value,
+          [...path, name],
+          pair.key.range?.[0] ?? 0,
+          isExact || exactKeys.has(name),
+        );
     }
     return result;
   };
@@ -109,8 +136,10 @@ export function readYaml(text: string, limits: YamlLimits, exactKeys: ReadonlySe
 }
 
 function scalarValue(node: Scalar, isExact: boolean): unknown {
-  if (isExact && node.type === Scalar.PLAIN && typeof node.value === 'number') return node.source ?? String(node.value);
-  if (typeof node.value === 'number' && !Number.isFinite(node.value)) return node.source ?? String(node.value);
+  if (isExact && node.type === Scalar.PLAIN && typeof node.value === 'number')
+    return node.source ?? String(node.value);
+  if (typeof node.value === 'number' && !Number.isFinite(node.value))
+    return node.source ?? String(node.value);
   return node.value;
 }
 

@@ -1,5 +1,5 @@
 import { Decimal } from 'decimal.js';
-import { suiteLimits, type Sweep, type SweepRange } from '../schemas/suite-file.ts';
+import { type Sweep, type SweepRange, suiteLimits } from '../schemas/suite-file.ts';
 
 /** What is wrong with a sweep, at the key of the entry that is to blame. */
 export class SweepError extends Error {
@@ -21,7 +21,8 @@ export function sweepNames(key: string): string[] {
 }
 
 function numberOf(entry: string, text: string): Decimal {
-  if (!numberPattern.test(text)) throw new SweepError(entry, `a number was expected instead of ${JSON.stringify(text)}`);
+  if (!numberPattern.test(text))
+    throw new SweepError(entry, `a number was expected instead of ${JSON.stringify(text)}`);
   return new Exact(text);
 }
 
@@ -46,7 +47,10 @@ function entryRows(key: string, entry: Sweep[string]): Record<string, string>[] 
   return rows.map((row) => {
     const values = Array.isArray(row) ? row : [row];
     if (values.length !== names.length) {
-      throw new SweepError(key, `${names.length} values a member were expected, one for each of ${names.join(', ')}`);
+      throw new SweepError(
+        key,
+        `${names.length} values a member were expected, one for each of ${names.join(', ')}`,
+      );
     }
     const result: Record<string, string> = {};
     names.forEach((name, i) => {
@@ -78,6 +82,8 @@ export function sweepMembers(sweep: Sweep): Record<string, string>[] {
 
 /** `family` and the member's values: `family-n10`, `family-a-40-b-1`. Lower case, no plus signs. */
 export function memberId(family: string, member: Record<string, string>): string {
-  const parts = Object.entries(member).map(([name, value]) => `${name}${value}`.toLowerCase().replaceAll('+', ''));
+  const parts = Object.entries(member).map(([name, value]) =>
+    `${name}${value}`.toLowerCase().replaceAll('+', ''),
+  );
   return [family, ...parts].join('-');
 }

@@ -1,0 +1,137 @@
+import { Decimal } from 'decimal.js';
+import { exactDecimal } from '../numerics/root-reference.ts';
+import { nextDown, nextUp, ulpOf } from '../numerics/ulps.ts';
+import type { Problem } from './certify-interval.ts';
+import { evaluateDecimal } from './decimal.ts';
+import { type CompiledDouble, compileDouble } from './double.ts';
+
+/** Ulps to each side of the rounded root at which the evaluation error is measured. */
+const reach = 16;
+const exactDigits = 50;
+/** Largest share of the bracket (of max(1, |r|) without one) that a flat root's width may be. */
+const flatShare = 1e-2;
+
+export interface AttainableRoot {
+  value: string;
+  multiplicity: number;
+}
+
+/** Raised with every change that can alter F, so that kept values are measured anew. */
+export const attainableVersion = 1;
+
+/** The parameters as binary64, as a solver's equation uses them. */
+export function binaryParameters(parameters: Readonly<Record<string, string>>): Record<string, number> {
+  return Object.fromEntries(Object.entries(parameters).map(([name, text]) => [name, Number(text)]));
+}
+
+function near(root: number): number[] {
+  const points = [root];
+  let up = root;
+  let down = root;
+  for (let i = 0; i < reach; i += 1) {
+    up = nextUp(up);
+    down = nextDown(down);
+    points.push(up, down);
+  }
+  return points;
+}
+
+/** η: the largest |f in binary64 − f in decimals| at r rounded and at ±1 … ±16 ulps, where both are defined. */
+export function evaluationError(problem: Problem, f: CompiledDouble['f'], root: number): Decimal {
+  let worst = new Decimal(0);
+  for (const x of near(root)) {
+    const computed = f(x);
+    if (!Number.isFinite(computed)) continue;
+    const text = exactDecimal(x).toString();
+    const { value } = evaluateDecimal(problem.equation, problem.parameters, text, exactDigits);
+    if (!value.isFinite()) continue;
+    const Wide = Decimal.clone({ precision: exactDigits, minE: -9e15, maxE: 9e15 });
+    const error = new Wide(value).minus(exactDecimal(computed)).abs();
+    if (error.gt(worst)) worst = error;
+  }
+  return worst;
+}
+
+/**
+ * |f⁽ᵐ⁾(r)|/m! from |f(r + h)|/|h|ᵐ at h = ±10⁻¹² |r| (±10⁻¹² where r = 0) at a precision that leaves the
+ * cancellation no say; the smaller of the two sides. Relative error about h times the next coefficient.
+ * null where f is undefined on both sides.
+ */
+export function leadingCoefficient(problem: Problem, root: AttainableRoot): Decimal | null {
+  const m = root.multiplicity;
+  const precision = 12 * (m + 1) + exactDigits;
+  const Wide = Decimal.clone({ precision: precision + 20, minE: -9e15, maxE: 9e15 });
+  const r = new Wide(root.value);
+  const size = (r.isZero() ? new Wide(1) : r.abs()).times('1e-12');
+  let least: Decimal | null = null;
+  for (const h of [size, size.negated()]) {
+    const { value } = evaluateDecimal(problem.equation, problem.parameters, r.plus(h).toString(), precision);
+    if (!value.isFinite()) continue;
+    const coefficient = new Wide(value).abs().div(size.pow(m));
+    if (least === null || coefficient.lt(least)) least = coefficient;
+  }
+  return least;
+}
+
+/** Whether f vanishes at r faster than any power that matters: |f(r ± h)| below h⁶⁴ at h = 10⁻³ max(1, |r|). */
+export function isFlatRoot(problem: Problem, value: string): boolean {
+  const r = new Decimal(value);
+  const h = Decimal.max(1, r.abs()).times('1e-3');
+  return [h, h.negated()].every((offset) => {
+    const Wide = Decimal.clone({ precision: 60 });
+    const at = evaluateDecimal(problem.equation, problem.parameters, new Wide(r).plus(offset).toString(), 60);
+    return at.value.isFinite() && at.value.abs().lt(h.pow(64));
+  });
+}
+
+/** Half the width of the stretch around r on which binary64 f is exactly 0, at most `most` to each side. */
+function flatHalfWidth(f: CompiledDouble['f'], root: number, most: number): number {
+  const side = (sign: 1 | -1): number => {
+    if (f(root + sign * most) === 0) return most;
+    let inside = 0;
+    let outside = most;
+    // Halving until the ends are as close as the width's own rounding; f is 0 on one connected stretch.
+    for (let step = 0; step < 200 && outside - inside > 1e-12 * most; step += 1) {
+      const middle = (inside + outside) / 2;
+      if (f(root + sign * middle) === 0) inside = middle;
+      else outside = middle;
+    }
+    return inside;
+  };
+  return Math.min(most, (side(1) + side(-1)) / 2);
+}
+
+/**
+ * F, the distance from a root r of multiplicity m below which binary64 evaluation of this form of f cannot
+ * tell x from r (absolute, in the unit of x):
+ * F = max(ulp(r)/2, (m! η / |f⁽ᵐ⁾(r)|)^(1/m)), with η measured, since the form of f decides it.
+ *
+ * Flat roots (all derivatives 0): half the width on which binary64 f is exactly 0, at most 1e-2 of the
+ * bracket, or 1e-2 max(1, |r|) without one; to be taken once where F is elsewhere taken 16 times.
+ *
+ * `value`: the certified root; `bracket`: as binary64, or null.
+ * Throws RangeError where f is undefined all round the root.
+ * Accuracy: tests/shared/certify/attainable.test.ts against closed forms, to a factor of 2.
+ * Source: the estimate is standard error analysis of roots (Wilkinson, Rounding Errors in Algebraic
+ * Processes, 1963, chapter 2, from memory); the rule for flat roots is our own.
+ */
+export function attainableAccuracy(
+  problem: Problem,
+  root: AttainableRoot,
+  bracket: readonly [number, number] | null,
+): number {
+  const { f } = compileDouble(problem.equation, binaryParameters(problem.parameters));
+  const rounded = Number(root.value);
+  if (isFlatRoot(problem, root.value)) {
+    const span = bracket === null ? Math.max(1, Math.abs(rounded)) : bracket[1] - bracket[0];
+    return flatHalfWidth(f, rounded, flatShare * span);
+  }
+  const coefficient = leadingCoefficient(problem, root);
+  if (coefficient === null) throw new RangeError(`f is undefined around ${root.value}`);
+  const error = evaluationError(problem, f, rounded);
+  const least = ulpOf(rounded) / 2;
+  if (coefficient.isZero()) return least;
+  const Wide = Decimal.clone({ precision: 30, minE: -9e15, maxE: 9e15 });
+  const distance = new Wide(error).div(coefficient).pow(new Wide(1).div(root.multiplicity)).toNumber();
+  return Math.max(least, Number.isFinite(distance) ? distance : least);
+}

@@ -1,0 +1,94 @@
+import { Decimal } from 'decimal.js';
+import { evaluateInterval } from './interval.ts';
+import type { Equation } from './tree.ts';
+
+/** An equation with the exact decimal values of its parameters: one function of x. */
+export interface Problem {
+  equation: Equation;
+  parameters: Readonly<Record<string, string>>;
+}
+
+/** Digits carried beyond those to be certified, for cancellation within f. */
+export const guardDigits = 40;
+
+/** −1, 0 or 1 where outward rounding leaves no doubt; null where it does, or f is undefined. */
+export function certainSign(problem: Problem, x: Decimal, digits: number): -1 | 0 | 1 | null {
+  const { value } = evaluateInterval(
+    problem.equation,
+    problem.parameters,
+    x.toString(),
+    x.toString(),
+    digits,
+  );
+  if (value === null) return null;
+  if (value.low.gt(0)) return 1;
+  if (value.high.lt(0)) return -1;
+  return value.low.isZero() && value.high.isZero() ? 0 : null;
+}
+
+/** Greatest magnitude that the enclosure of f at x allows; null where f is undefined or unbounded there. */
+function magnitude(problem: Problem, x: Decimal, digits: number): Decimal | null {
+  const { value } = evaluateInterval(
+    problem.equation,
+    problem.parameters,
+    x.toString(),
+    x.toString(),
+    digits,
+  );
+  if (value === null || !value.low.isFinite() || !value.high.isFinite()) return null;
+  return Decimal.max(value.low.abs(), value.high.abs());
+}
+
+/**
+ * Certificate A: f changes sign over [x − h, x + h], both signs certain by outward rounding, and |f| shrinks
+ * to at most a half on both sides between a distance of 10²⁰ h and h, which neither a pole nor a jump does.
+ * Source: Bolzano's theorem; Neumaier, Interval Methods for Systems of Equations, 1990 (from memory).
+ */
+export function changesSign(
+  problem: Problem,
+  x: Decimal,
+  h: Decimal,
+  digits: number,
+): 'yes' | 'no' | 'pole or jump' {
+  const precise = Decimal.clone({ precision: digits + 20 });
+  const ends = [new precise(x).minus(h), new precise(x).plus(h)] as const;
+  const left = certainSign(problem, ends[0], digits);
+  const right = certainSign(problem, ends[1], digits);
+  if (left === null || right === null || left * right !== -1) return 'no';
+  const wide = h.times('1e20');
+  const far = [new precise(x).minus(wide), new precise(x).plus(wide)] as const;
+  for (const side of [0, 1] as const) {
+    const close = magnitude(problem, ends[side], digits);
+    const distant = magnitude(problem, far[side], digits);
+    if (close === null) return 'pole or jump';
+    if (distant !== null && close.times(2).gt(distant)) return 'pole or jump';
+  }
+  return 'yes';
+}
+
+/**
+ * Certificate B: interval Newton, N(X) = mid − f(mid)/f′(X) inside the interior of X = [x − h, x + h]: exactly
+ * one root in X, and it is simple. Every quotient is rounded outward.
+ * Source: Moore 1966; Moore, Kearfott and Cloud, Introduction to Interval Analysis, SIAM 2009 (from memory).
+ */
+export function isUniqueSimple(problem: Problem, x: Decimal, h: Decimal, digits: number): boolean {
+  const settings = { precision: digits, minE: -9e15, maxE: 9e15 };
+  const Down = Decimal.clone({ ...settings, rounding: Decimal.ROUND_FLOOR });
+  const Up = Decimal.clone({ ...settings, rounding: Decimal.ROUND_CEIL });
+  const low = new Up(x).minus(h);
+  const high = new Down(x).plus(h);
+  const { equation, parameters } = problem;
+  const slope = evaluateInterval(equation, parameters, low.toString(), high.toString(), digits).derivative;
+  const middle = evaluateInterval(equation, parameters, x.toString(), x.toString(), digits).value;
+  if (slope === null || middle === null || !slope.low.isFinite() || !slope.high.isFinite()) return false;
+  if (slope.low.lte(0) && slope.high.gte(0)) return false;
+  const pairs = [
+    [middle.low, slope.low],
+    [middle.low, slope.high],
+    [middle.high, slope.low],
+    [middle.high, slope.high],
+  ] as const;
+  const most = Decimal.max(...pairs.map(([a, b]) => new Up(a).div(b).toString()));
+  const least = Decimal.min(...pairs.map(([a, b]) => new Down(a).div(b).toString()));
+  return new Down(x).minus(most).gt(low) && new Up(x).minus(least).lt(high);
+}
