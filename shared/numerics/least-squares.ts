@@ -1,6 +1,7 @@
 export interface LeastSquaresFit {
+  /** In the order of the columns, the constant term last. */
   coefficients: number[];
-  /** Of the coefficients, from the residual variance. */
+  /** Of the coefficients without the constant term, from the residual variance. */
   covariance: number[][];
   /** Residual standard deviation, rows less coefficients degrees of freedom. */
   deviation: number;

@@ -28,8 +28,12 @@ const mostDeviation = 0.3;
 const mostTerms = 3;
 /** Least half-width, relative: the asymptotic regime is not quite reached in binary64. Measured. */
 const leastWidth = 0.005;
-/** The same for bracketing methods, whose cycle average 16 digits do not reach. Measured on Pegasus. */
-const leastBracketingWidth = 0.03;
+/** The same for bracketing methods, whose cycle average 16 digits do not reach. Measured on Pegasus, Anderson–Björck. */
+const leastBracketingWidth = 0.06;
+/** An order nearer to 1 is not told from linear, and a recurrence of linear gains determines nothing more. */
+const leastOrder = 1.1;
+/** Largest standard error of an order that is given, relative. */
+const mostError = 0.1;
 
 /**
  * Fits L_{k+1} = a₁ L_k + … + a_r L_{k−r+1} + b, L = ln |e|, to the steps of all runs above 16 times the
@@ -39,11 +43,11 @@ const leastBracketingWidth = 0.03;
  * whose characteristic root is its order (Traub 1964, Iterative Methods for the Solution of Equations, ch. 3,
  * from memory). Steps that do not decrease by a factor 2 are left out, and the shallowest quarter where there
  * are ten rows and more. A larger r is taken only where it brings the deviation below a third. Standard error
- * by the delta method; the interval is two of them, at least 0.5 % (bracketing methods 3 %).
+ * by the delta method; the interval is two of them, at least 0.5 % (bracketing methods 6 %).
  *
  * `runs`: ln of the exact errors of each run, null for a hit. `lnFloor`: ln of the attainable accuracy.
  * Returned, by status: `estimated` · `not enough steps`: under five rows · `not resolved`: the deviation about
- * the fit stays above 0.3 or no real root is above 1 · `steps without gain`: over 15 % of the steps after the
+ * the fit stays above 0.3, the order is below 1.1 or its standard error above a tenth · `steps without gain`: over 15 % of the steps after the
  * first contraction win less than a factor 2 (bisection; the modified steps of Illinois, for which the
  * recurrence would give a wrong 1.618).
  * Accuracy: tests/published/orders.test.ts.
@@ -77,14 +81,15 @@ export function pooledOrder(
     if (fit === null) continue;
     isFitted = true;
     const order = largestRoot(fit.coefficients.slice(0, terms), fit.covariance);
-    if (order === null) continue;
+    if (order === null || order.standardError > mostError * order.value) continue;
     if (best === null || fit.deviation < best.deviation / 3) {
       best = { terms, rows: rows.length, deviation: fit.deviation, order };
     }
+    if (terms === 1 && fit.deviation <= mostDeviation && order.value < leastOrder) break;
   }
   if (best === null) return none(isFitted ? 'not resolved' : 'not enough steps');
   const { terms, rows, deviation, order } = best;
-  if (deviation > mostDeviation || order.value <= 1)
+  if (deviation > mostDeviation || order.value < leastOrder)
     return { ...none('not resolved', rows), terms, deviation };
   const least = (methodClass === 'bracketing' ? leastBracketingWidth : leastWidth) * order.value;
   const half = Math.max(2 * order.standardError, least);
