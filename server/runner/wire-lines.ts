@@ -19,10 +19,13 @@ export class LineReader {
   /** Bytes from #start on that are known to hold no line feed. */
   #searched = 0;
   #isSkipping = false;
+  #last: [number, number] = [0, 0];
 
   /** Lets `read` put bytes into the buffer and says how many it put. */
   fill(read: (buffer: Buffer, offset: number, length: number) => number): number {
     this.#makeRoom();
+    this.#last[0] = 0;
+    this.#last[1] = 0;
     const count = read(this.#buffer, this.#end, this.#buffer.length - this.#end);
     this.#end += count;
     return count;
@@ -37,9 +40,16 @@ export class LineReader {
     });
   }
 
-  /** Whether bytes are there that `next` has not given out: whole lines or the beginning of one. */
-  isHolding(): boolean {
-    return this.#start < this.#end;
+  /** Whether the beginning of a line is held that is no comment and not blank. Only when `next` gave null. */
+  holdsOther(): boolean {
+    const [first] = this.#buffer.toString('latin1', this.#start, this.#end).trimStart();
+    return first !== undefined && first !== '#';
+  }
+
+  /** The first 200 characters of the line that `next` gave last, or of what is held of one; before the next fill. */
+  lastLine(): string {
+    const [from, to] = this.#last[0] < this.#last[1] ? this.#last : [this.#start, this.#end];
+    return escapeLine(this.#buffer.subarray(from, to));
   }
 
   /** The next line as an event, or null where no whole line is there. */
@@ -50,7 +60,11 @@ export class LineReader {
       const start = this.#start;
       this.#start = at + 1;
       this.#searched = 0;
-      if (!this.#isSkipping) return parseLine(this.#buffer, start, at);
+      if (!this.#isSkipping) {
+        this.#last[0] = start;
+        this.#last[1] = at;
+        return parseLine(this.#buffer, start, at);
+      }
       this.#isSkipping = false;
     }
   }
