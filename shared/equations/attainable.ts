@@ -1,9 +1,8 @@
 import { Decimal } from 'decimal.js';
 import { exactDecimal } from '../numerics/root-reference.ts';
 import { nextDown, nextUp, ulpOf } from '../numerics/ulps.ts';
-import type { Problem } from './certify-interval.ts';
-import { evaluateDecimal } from './decimal.ts';
 import { type CompiledDouble, compileDouble } from './double.ts';
+import type { Problem } from './problem.ts';
 
 /** Ulps to each side of the rounded root at which the evaluation error is measured. */
 const reach = 16;
@@ -42,8 +41,7 @@ export function evaluationError(problem: Problem, f: CompiledDouble['f'], root: 
   for (const x of near(root)) {
     const computed = f(x);
     if (!Number.isFinite(computed)) continue;
-    const text = exactDecimal(x).toString();
-    const { value } = evaluateDecimal(problem.equation, problem.parameters, text, exactDigits);
+    const { value } = problem.decimal(exactDigits)(exactDecimal(x));
     if (!value.isFinite()) continue;
     const Wide = Decimal.clone({ precision: exactDigits, minE: -9e15, maxE: 9e15 });
     const error = new Wide(value).minus(exactDecimal(computed)).abs();
@@ -65,7 +63,7 @@ export function leadingCoefficient(problem: Problem, root: AttainableRoot): Deci
   const size = (r.isZero() ? new Wide(1) : r.abs()).times('1e-12');
   let least: Decimal | null = null;
   for (const h of [size, size.negated()]) {
-    const { value } = evaluateDecimal(problem.equation, problem.parameters, r.plus(h).toString(), precision);
+    const { value } = problem.decimal(precision)(r.plus(h));
     if (!value.isFinite()) continue;
     const coefficient = new Wide(value).abs().div(size.pow(m));
     if (least === null || coefficient.lt(least)) least = coefficient;
@@ -79,7 +77,7 @@ export function isFlatRoot(problem: Problem, value: string): boolean {
   const h = Decimal.max(1, r.abs()).times('1e-3');
   return [h, h.negated()].every((offset) => {
     const Wide = Decimal.clone({ precision: 60 });
-    const at = evaluateDecimal(problem.equation, problem.parameters, new Wide(r).plus(offset).toString(), 60);
+    const at = problem.decimal(60)(new Wide(r).plus(offset));
     return at.value.isFinite() && at.value.abs().lt(h.pow(64));
   });
 }

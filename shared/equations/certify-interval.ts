@@ -1,25 +1,12 @@
 import { Decimal } from 'decimal.js';
-import { evaluateInterval } from './interval.ts';
-import type { Equation } from './tree.ts';
-
-/** An equation with the exact decimal values of its parameters: one function of x. */
-export interface Problem {
-  equation: Equation;
-  parameters: Readonly<Record<string, string>>;
-}
+import type { Problem } from './problem.ts';
 
 /** Digits carried beyond those to be certified, for cancellation within f. */
 export const guardDigits = 40;
 
 /** −1, 0 or 1 where outward rounding leaves no doubt; null where it does, or f is undefined. */
 export function certainSign(problem: Problem, x: Decimal, digits: number): -1 | 0 | 1 | null {
-  const { value } = evaluateInterval(
-    problem.equation,
-    problem.parameters,
-    x.toString(),
-    x.toString(),
-    digits,
-  );
+  const { value } = problem.interval(digits)(x, x);
   if (value === null) return null;
   if (value.low.gt(0)) return 1;
   if (value.high.lt(0)) return -1;
@@ -28,13 +15,7 @@ export function certainSign(problem: Problem, x: Decimal, digits: number): -1 | 
 
 /** Greatest magnitude that the enclosure of f at x allows; null where f is undefined or unbounded there. */
 function magnitude(problem: Problem, x: Decimal, digits: number): Decimal | null {
-  const { value } = evaluateInterval(
-    problem.equation,
-    problem.parameters,
-    x.toString(),
-    x.toString(),
-    digits,
-  );
+  const { value } = problem.interval(digits)(x, x);
   if (value === null || !value.low.isFinite() || !value.high.isFinite()) return null;
   return Decimal.max(value.low.abs(), value.high.abs());
 }
@@ -77,9 +58,8 @@ export function isUniqueSimple(problem: Problem, x: Decimal, h: Decimal, digits:
   const Up = Decimal.clone({ ...settings, rounding: Decimal.ROUND_CEIL });
   const low = new Up(x).minus(h);
   const high = new Down(x).plus(h);
-  const { equation, parameters } = problem;
-  const slope = evaluateInterval(equation, parameters, low.toString(), high.toString(), digits).derivative;
-  const middle = evaluateInterval(equation, parameters, x.toString(), x.toString(), digits).value;
+  const slope = problem.interval(digits)(low, high).derivative;
+  const middle = problem.interval(digits)(x, x).value;
   if (slope === null || middle === null || !slope.low.isFinite() || !slope.high.isFinite()) return false;
   if (slope.low.lte(0) && slope.high.gte(0)) return false;
   const pairs = [

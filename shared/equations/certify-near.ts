@@ -1,6 +1,7 @@
 import { Decimal } from 'decimal.js';
 import { exactDecimal } from '../numerics/root-reference.ts';
-import { certainSign, changesSign, isUniqueSimple, type Problem } from './certify-interval.ts';
+import { certainSign, changesSign, isUniqueSimple } from './certify-interval.ts';
+import { type Problem, problemOf } from './problem.ts';
 import { refineRoot } from './refine-root.ts';
 import type { Equation } from './tree.ts';
 
@@ -56,7 +57,7 @@ export function certifyNear(
   radius: number,
 ): string | null {
   if (!Number.isFinite(x) || !Number.isFinite(radius) || radius < 0) return null;
-  const problem: Problem = { equation, parameters };
+  const problem = problemOf(equation, parameters);
   const Wide = Decimal.clone({ precision: 120, minE: -9e15, maxE: 9e15 });
   const start = new Wide(exactDecimal(x));
   const reach = new Wide(exactDecimal(radius));

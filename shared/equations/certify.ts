@@ -1,7 +1,7 @@
 import { Decimal } from 'decimal.js';
 import type { CertifiedRoot } from '../schemas/case.ts';
-import { certainSign, changesSign, guardDigits, isUniqueSimple, type Problem } from './certify-interval.ts';
-import { evaluateDecimal } from './decimal.ts';
+import { certainSign, changesSign, guardDigits, isUniqueSimple } from './certify-interval.ts';
+import { type Problem, problemOf } from './problem.ts';
 import { refineRoot } from './refine-root.ts';
 import type { Equation } from './tree.ts';
 
@@ -61,7 +61,7 @@ const refuse = (reason: string): Certification => ({ isCertified: false, reason 
  */
 export function certifyRoot(problem: Problem, claimed: Claimed): Certification {
   const digits = claimed.digits ?? usualDigits;
-  const base: Problem = claimed.simple === null ? problem : { ...problem, equation: claimed.simple };
+  const base: Problem = claimed.simple === null ? problem : problemOf(claimed.simple, problem.parameters);
   const refined = refine(base, claimed, digits);
   if ('reason' in refined) return refuse(refined.reason);
   const x = refined.root;
@@ -183,7 +183,7 @@ function certifyMultiple(
 function derivativesVanish(problem: Problem, claimed: Claimed, x: Decimal, precision: number): string | null {
   if (claimed.multiplicity > 3)
     return `a root of multiplicity ${claimed.multiplicity} needs its base: simple: …`;
-  const at = evaluateDecimal(problem.equation, problem.parameters, x.toString(), precision);
+  const at = problem.decimal(precision)(x);
   if (!at.value.isZero())
     return `f is not exactly 0 at ${claimed.value}; a multiple root needs its base: simple: …`;
   if (!at.first.isZero()) return `f′ is not 0 at ${claimed.value}: the root is simple there`;
@@ -207,9 +207,9 @@ export function vanishingPower(problem: Problem, base: Problem | null, x: Decima
     const ratios: Decimal[] = [];
     for (const distance of distances) {
       const offset = scale.times(new Work(10).pow(-distance)).times(side);
-      const t = new Work(x).plus(offset).toString();
-      const f = evaluateDecimal(problem.equation, problem.parameters, t, precision).value;
-      const g = base === null ? offset : evaluateDecimal(base.equation, base.parameters, t, precision).value;
+      const t = new Work(x).plus(offset);
+      const f = problem.decimal(precision)(t).value;
+      const g = base === null ? offset : base.decimal(precision)(t).value;
       if (!f.isFinite() || !g.isFinite() || g.isZero()) return null;
       ratios.push(new Work(f).abs().div(new Work(g).abs().pow(m)));
     }

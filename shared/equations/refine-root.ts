@@ -1,7 +1,6 @@
 import { Decimal } from 'decimal.js';
-import type { Problem } from './certify-interval.ts';
 import { guardDigits } from './certify-interval.ts';
-import { evaluateDecimal } from './decimal.ts';
+import type { Problem } from './problem.ts';
 
 const firstDigits = 30;
 const mostSteps = 14;
@@ -21,7 +20,7 @@ export function refineRoot(
   let x = new Full(start);
   let working = Math.min(most, Math.max(firstDigits, start.precision() + 10));
   for (let step = 0; step < mostSteps; step += 1) {
-    const { value, first } = evaluateDecimal(problem.equation, problem.parameters, x.toString(), working);
+    const { value, first } = problem.decimal(working)(x);
     if (value.isZero()) {
       // Zero at few digits may be cancellation; it counts once it holds at all of them.
       if (working === most) return { root: x, isExact: true };

@@ -91,7 +91,7 @@ export const fileRoot = z.strictObject({
   value: sweptNumber,
   /** Significant digits to certify; only where the equation does not allow the usual 45. */
   digits: z.int().min(1).max(45).optional(),
-  multiplicity: z.int().min(1).max(64).default(1),
+  multiplicity: z.int().min(1).max(24).default(1),
   allowed: z.boolean().default(true),
   /** A base g with a simple root here, where f is g to the power of the multiplicity times a factor that is not 0. */
   simple: z.string().min(1).max(2000).optional(),

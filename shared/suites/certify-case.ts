@@ -1,10 +1,11 @@
 import { Decimal } from 'decimal.js';
 import { attainableAccuracy, binaryParameters, isFlatRoot } from '../equations/attainable.ts';
 import { certifyRoot } from '../equations/certify.ts';
-import { certainSign, type Problem } from '../equations/certify-interval.ts';
+import { certainSign } from '../equations/certify-interval.ts';
 import { certifyNear } from '../equations/certify-near.ts';
 import { compileDouble } from '../equations/double.ts';
 import { parseEquation } from '../equations/parse-equation.ts';
+import { type Problem, problemOf } from '../equations/problem.ts';
 import type { CertifiedRoot } from '../schemas/case.ts';
 import { type CertificationCache, certificationKey } from './certification-cache.ts';
 import { exactDecimalText } from './exact-decimal.ts';
@@ -124,7 +125,7 @@ function unexpectedRoot(problem: Problem, plain: PlainCase): string | null {
  */
 export function certifyCase(plain: PlainCase, cache: CertificationCache | null): CertifiedCase {
   const equation = parseEquation(plain.equation, Object.keys(plain.parameters));
-  const problem: Problem = { equation, parameters: plain.parameters };
+  const problem = problemOf(equation, plain.parameters);
   const problems: CaseProblem[] = [];
   const refuse = (path: (string | number)[], reason: string) => {
     problems.push({ path: [...plain.path, ...path], offset: 0, message: `${plain.id}: ${reason}` });

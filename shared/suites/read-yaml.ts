@@ -1,4 +1,7 @@
 import {
+  Composer,
+  type CST,
+  type Document,
   isAlias,
   isMap,
   isScalar,
@@ -7,7 +10,6 @@ import {
   LineCounter,
   type Node,
   Parser,
-  parseDocument,
   Scalar,
 } from 'yaml';
 import type { Issue } from '../errors.ts';
@@ -47,26 +49,51 @@ function pathKey(path: YamlPath): string {
   return path.map(String).join('\u0000');
 }
 
-/** Refuses what is too big or too deep before anything recursive sees the text; walks the tokens only. */
-function refuseEarly(text: string, limits: YamlLimits, lines: LineCounter): Issue | null {
+/** Lexical tokens that a text may have: each costs the parser some microseconds, however short it is. */
+const tokenCap = 200_000;
+/** Backslashes in one quoted text: each wrong one costs the parser an error. */
+const escapeCap = 2000;
+
+/**
+ * The syntax tokens of a text, or why it is refused. Size, token count and depth are bounded here, before
+ * anything recursive sees the text: lexer and parser keep their own stacks.
+ */
+function tokensOf(text: string, limits: YamlLimits, lines: LineCounter): CST.Token[] | Issue {
   if (text.length > limits.bytes || new TextEncoder().encode(text).length > limits.bytes) {
     return { message: `The text is larger than ${limits.bytes} bytes.` };
   }
   const parser = new Parser(lines.addNewLine);
   lines.addNewLine(0);
+  const tokens: CST.Token[] = [];
+  let count = 0;
   for (const lexeme of new Lexer().lex(text)) {
-    // The generator does its work as it is drained; the tokens themselves are not needed here.
-    for (const _ of parser.next(lexeme));
-    if (parser.stack.length > limits.depth * 2 + 2) {
-      const at = lines.linePos(parser.offset);
-      return {
-        line: at.line,
-        column: at.col,
-        message: `Nesting deeper than ${limits.depth} levels is refused.`,
-      };
-    }
+    for (const token of parser.next(lexeme)) tokens.push(token);
+    count += 1;
+    const isOverEscaped = lexeme.startsWith('"') && lexeme.split('\\').length > escapeCap;
+    const isTooDeep = parser.stack.length > limits.depth * 2 + 2;
+    if (!isTooDeep && !isOverEscaped && count <= tokenCap) continue;
+    const at = lines.linePos(parser.offset);
+    const message = isTooDeep
+      ? `Nesting deeper than ${limits.depth} levels is refused.`
+      : isOverEscaped
+        ? 'A quoted text with so many backslashes is refused.'
+        : `More than ${tokenCap} values, signs and line ends are refused.`;
+    return { line: at.line, column: at.col, message };
   }
-  return null;
+  for (const token of parser.end()) tokens.push(token);
+  return tokens;
+}
+
+/** The one document of a text; further ones are reported as an error of it. */
+function composeOne(
+  tokens: CST.Token[],
+  length: number,
+): { document: Document.Parsed; second: number | null } {
+  const composer = new Composer({ schema: 'core', uniqueKeys: false, prettyErrors: false, stringKeys: true });
+  const [document, second] = composer.compose(tokens, true, length);
+  // With `true` an empty text is composed too, so that there always is one.
+  if (document === undefined) throw new Error('no document was composed');
+  return { document, second: second === undefined ? null : second.range[0] };
 }
 
 /**
@@ -79,18 +106,20 @@ export function readYaml(text: string, limits: YamlLimits, exactKeys: ReadonlySe
   const places = new Map<string, Place>();
   const issues: Issue[] = [];
   const positions = sourcePositions(text, lines, places);
-  const early = refuseEarly(text, limits, lines);
-  if (early !== null) return { value: undefined, positions, issues: [early] };
-
-  const document = parseDocument(text, {
-    schema: 'core',
-    uniqueKeys: false,
-    prettyErrors: false,
-    stringKeys: true,
-  });
+  const tokens = tokensOf(text, limits, lines);
+  if (!Array.isArray(tokens)) return { value: undefined, positions, issues: [tokens] };
+  const { document, second } = composeOne(tokens, text.length);
   for (const error of document.errors.slice(0, issueCap)) {
     const at = lines.linePos(error.pos[0]);
     issues.push({ line: at.line, column: at.col, message: `This is no valid YAML: ${error.message}.` });
+  }
+  if (second !== null) {
+    const at = lines.linePos(second);
+    issues.push({
+      line: at.line,
+      column: at.col,
+      message: 'One document was expected; a second one begins here.',
+    });
   }
   if (issues.length > 0) return { value: undefined, positions, issues };
 
@@ -132,7 +161,7 @@ export function readYaml(text: string, limits: YamlLimits, exactKeys: ReadonlySe
     return result;
   };
   const value = walk(document.contents, [], 0, false);
-  return { value, positions, issues };
+  return { value: issues.length === 0 ? value : undefined, positions, issues };
 }
 
 function scalarValue(node: Scalar, isExact: boolean): unknown {
