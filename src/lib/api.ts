@@ -92,3 +92,24 @@ export async function apiSend<Schema extends z.ZodType>(
   const headers = { accept: 'application/json', 'content-type': 'application/json' };
   return parse(schema, await send(path, { method, headers, body: JSON.stringify(body) }));
 }
+
+/** Reads every page of a list, in order. For lists that a page shows whole. */
+export async function apiGetAll<Item>(
+  page: z.ZodType<{ items: Item[]; next: string | null }>,
+  path: string,
+  query: Record<string, QueryValue> = {},
+  signal?: AbortSignal,
+): Promise<Item[]> {
+  const items: Item[] = [];
+  let cursor: string | null = null;
+  do {
+    const part: { items: Item[]; next: string | null } = await apiGet(
+      page,
+      `${path}${toQuery({ limit: 500, ...query, cursor })}`,
+      signal,
+    );
+    items.push(...part.items);
+    cursor = part.next;
+  } while (cursor !== null);
+  return items;
+}

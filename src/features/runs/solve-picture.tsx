@@ -1,0 +1,36 @@
+import { useQuery } from '@tanstack/react-query';
+import { useMemo } from 'react';
+import type { SuiteCase } from '../../../shared/schemas/case.ts';
+import type { SolveView } from '../../../shared/schemas/runs.ts';
+import { DigitStrip, stripWidth } from '../../components/digit-strip/digit-strip.tsx';
+import { pictureOfSolve, type SolvePicture, wordsInsteadOfStrip } from '../../lib/strip-of-solve.ts';
+import { solveQuery } from './runs.queries.ts';
+
+/** The picture of a stored solve; undefined while its path is read. */
+export function useSolvePicture(
+  solve: SolveView | null,
+  suiteCase: SuiteCase | undefined,
+): SolvePicture | undefined {
+  const words = solve === null ? 'not there' : wordsInsteadOfStrip(solve, suiteCase);
+  const query = useQuery({ ...solveQuery(solve?.id ?? 0), enabled: words === null });
+  const file = query.data?.path;
+  return useMemo(() => {
+    if (words !== null) return { kind: 'words', words };
+    if (solve === null || file === undefined) return undefined;
+    return pictureOfSolve(solve, suiteCase, file);
+  }, [words, solve, suiteCase, file]);
+}
+
+export interface SolvePictureCellProps {
+  solve: SolveView;
+  suiteCase: SuiteCase | undefined;
+  pitch: 10 | 8 | 7;
+}
+
+/** A strip, or the words that stand for it; an empty place of the same size while it is read. */
+export function SolvePictureCell({ solve, suiteCase, pitch }: SolvePictureCellProps) {
+  const picture = useSolvePicture(solve, suiteCase);
+  if (picture === undefined) return <span className="block h-5" style={{ width: stripWidth(pitch) }} />;
+  if (picture.kind === 'words') return <span className="text-header text-ink-3">{picture.words}</span>;
+  return <DigitStrip strip={picture.strip} counts={picture.counts} pitch={pitch} />;
+}

@@ -1,0 +1,82 @@
+import { nearestRoot } from '../../shared/numerics/digits.ts';
+import { isRightlyRefused } from '../../shared/numerics/judge-claim.ts';
+import { rootReference } from '../../shared/numerics/root-reference.ts';
+import { stripEvents } from '../../shared/numerics/strip-events.ts';
+import type { SuiteCase } from '../../shared/schemas/case.ts';
+import { type PathFile, pathFromFile } from '../../shared/schemas/path.ts';
+import type { SolveRecord } from '../../shared/schemas/solve.ts';
+import type { StripInput } from '../components/digit-strip/strip-layout.ts';
+import type { StripCounts } from '../components/digit-strip/strip-words.ts';
+
+/** What stands in the place of a strip: the strip, or words where there is nothing to draw. */
+export type SolvePicture =
+  | { kind: 'strip'; strip: StripInput; counts: StripCounts }
+  | { kind: 'words'; words: string };
+
+/** Words for a solve that no strip can show, or null where one can. */
+export function wordsInsteadOfStrip(
+  solve: Pick<SolveRecord, 'outcome' | 'remarks'>,
+  suiteCase: SuiteCase | undefined,
+): string | null {
+  if (solve.outcome === 'not applicable') return 'not applicable';
+  if (suiteCase?.expectation === 'none') {
+    return isRightlyRefused(solve) ? 'no root here; rightly refused' : `no root here; ${solve.outcome}`;
+  }
+  if (suiteCase === undefined || suiteCase.roots.length === 0) return 'no certified root';
+  return null;
+}
+
+/** Correct digits that a root can be told to in binary64: −log10 of F relative to it. Cut to 0 … 16. */
+export function attainableDigits(root: SuiteCase['roots'][number]): number {
+  const size = Math.abs(Number(root.value));
+  const relative = size === 0 ? root.attainable : root.attainable / size;
+  return relative === 0 ? 16 : Math.min(16, Math.max(0, -Math.log10(relative)));
+}
+
+/** Index of the root that a solve is measured against: the one it went to, else the nearest to its last x. */
+export function rootOfSolve(
+  solve: Pick<SolveRecord, 'nearest'>,
+  suiteCase: SuiteCase,
+  lastX: number,
+): number | null {
+  if (solve.nearest !== null && suiteCase.roots[solve.nearest] !== undefined) return solve.nearest;
+  const allowed = suiteCase.roots.flatMap((root, index) => (root.allowed ? [{ root, index }] : []));
+  const candidates = allowed.length > 0 ? allowed : suiteCase.roots.map((root, index) => ({ root, index }));
+  const near = nearestRoot(
+    lastX,
+    candidates.map(({ root }) => rootReference(root.value)),
+  );
+  return candidates[near?.index ?? 0]?.index ?? null;
+}
+
+/** The picture of a solve from its record, its case and its path. */
+export function pictureOfSolve(
+  solve: SolveRecord,
+  suiteCase: SuiteCase | undefined,
+  file: PathFile | null,
+): SolvePicture {
+  const words = wordsInsteadOfStrip(solve, suiteCase);
+  if (words !== null || suiteCase === undefined)
+    return { kind: 'words', words: words ?? 'no certified root' };
+  if (file === null) return { kind: 'words', words: 'no path kept' };
+  const path = pathFromFile(file);
+  const lastX = path.events.findLast((event) => Number.isFinite(event.x))?.x ?? Number.NaN;
+  const index = rootOfSolve(solve, suiteCase, lastX);
+  const root = index === null ? undefined : suiteCase.roots[index];
+  if (root === undefined) return { kind: 'words', words: 'no certified root' };
+  return {
+    kind: 'strip',
+    strip: {
+      events: stripEvents(path, rootReference(root.value)),
+      outcome: solve.outcome,
+      digits: solve.digits,
+      attainable: attainableDigits(root),
+      exact: solve.exact,
+    },
+    counts: {
+      evaluations: solve.evaluations,
+      derivatives: solve.df + solve.d2f,
+      repeated: solve.queryCheck.repeated,
+    },
+  };
+}

@@ -1,0 +1,47 @@
+import { useCallback } from 'react';
+import { useSearchParams } from 'react-router';
+
+export interface ViewState {
+  /** One value, or an empty text. */
+  get(name: string): string;
+  /** A comma-separated list; empty where the name is not set. */
+  list(name: string): string[];
+  /** Sets values; an empty text or list takes the name out of the address. */
+  set(values: Record<string, string | readonly string[]>): void;
+  /** Adds a word to a list or takes it out. */
+  toggle(name: string, word: string): void;
+  clear(...names: string[]): void;
+}
+
+/** What a page shows (filters, sort, selection) lives in its address, so that it can be sent and kept. */
+export function useViewState(): ViewState {
+  const [search, setSearch] = useSearchParams();
+  const set = useCallback(
+    (values: Record<string, string | readonly string[]>) => {
+      setSearch(
+        (before) => {
+          const after = new URLSearchParams(before);
+          for (const [name, value] of Object.entries(values)) {
+            const text = typeof value === 'string' ? value : value.join(',');
+            if (text === '') after.delete(name);
+            else after.set(name, text);
+          }
+          return after;
+        },
+        { replace: true, preventScrollReset: true },
+      );
+    },
+    [setSearch],
+  );
+  const list = (name: string): string[] => (search.get(name) ?? '').split(',').filter((word) => word !== '');
+  return {
+    get: (name) => search.get(name) ?? '',
+    list,
+    set,
+    toggle: (name, word) => {
+      const words = list(name);
+      set({ [name]: words.includes(word) ? words.filter((other) => other !== word) : [...words, word] });
+    },
+    clear: (...names) => set(Object.fromEntries(names.map((name) => [name, '']))),
+  };
+}
