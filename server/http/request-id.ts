@@ -7,11 +7,11 @@ const acceptable = /^[A-Za-z0-9._-]{8,64}$/;
 export const requestId: RequestHandler = (request, response, next) => {
   const given = request.get('x-request-id');
   const id = given !== undefined && acceptable.test(given) ? given : randomUUID();
-  response.locals['requestId'] = id;
+  response.locals.requestId = id;
   response.set('X-Request-Id', id);
   next();
 };
 
 export function requestIdOf(response: Response): string {
-  return String(response.locals['requestId'] ?? '');
+  return String(response.locals.requestId ?? '');
 }

@@ -1,15 +1,15 @@
 import { asc, eq, gt, sql } from 'drizzle-orm';
 import { AppError } from '../../../shared/errors.ts';
 import { type Db, isConstraintError } from '../../db/client.ts';
-import { builds, libraries, solvers } from '../../db/schema/libraries.ts';
-import { runs } from '../../db/schema/runs.ts';
+import { libraries } from '../../db/schema/libraries.ts';
 
 export type LibraryRow = typeof libraries.$inferSelect;
 
+// Written out, since a column in a query on one table is otherwise named without its table.
 const counts = {
-  solverCount: sql<number>`(select count(*) from ${solvers} where ${solvers.libraryId} = ${libraries.id} and ${solvers.declared})`,
-  buildCount: sql<number>`(select count(*) from ${builds} where ${builds.libraryId} = ${libraries.id})`,
-  runCount: sql<number>`(select count(*) from ${runs} where ${runs.libraryId} = ${libraries.id})`,
+  solverCount: sql<number>`(select count(*) from solvers as s where s.library_id = libraries.id and s.declared)`,
+  buildCount: sql<number>`(select count(*) from builds as b where b.library_id = libraries.id)`,
+  runCount: sql<number>`(select count(*) from runs as r where r.library_id = libraries.id)`,
 };
 
 export function createLibrariesRepo(db: Db) {

@@ -21,7 +21,8 @@ export interface MeasureOptions {
 export interface MeasureCallbacks {
   /** Whether the solve with this key (`solveKey`) is stored already and need not be done. */
   isDone(key: string): boolean;
-  onSolve(record: SolveRecord, path: Path): void;
+  /** `path` is null where nothing ran. */
+  onSolve(record: SolveRecord, path: Path | null): void;
 }
 
 export interface MeasureResult {

@@ -39,14 +39,14 @@ export function createSolveSink(options: SolveSinkOptions) {
   }
 
   return {
-    add(record: SolveRecord, path: Path): void {
+    add(record: SolveRecord, path: Path | null): void {
       if (hasFailed) return;
       const solver = keys.positionOf.get(record.solver);
       const caseId = keys.caseIdOf.get(record.case);
       if (solver === undefined || caseId === undefined)
         throw new RangeError(`The run has no solver ${record.solver} or no case ${record.case}`);
-      const isEmpty = path.events.length === 0 && path.cut === 0;
-      const data = isEmpty ? null : options.encodePath(path);
+      const hasPath = path !== null && (path.events.length > 0 || path.cut > 0);
+      const data = hasPath ? options.encodePath(path) : null;
       batch.push({ solver, caseId, start: record.start ?? -1, record, path: data });
       if (batch.length >= batchSize) flush();
       else timer ??= setTimeout(flush, batchMs);

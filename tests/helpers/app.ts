@@ -1,0 +1,131 @@
+import { copyFileSync, mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import path from 'node:path';
+import type { Express } from 'express';
+import { pino } from 'pino';
+import { afterAll } from 'vitest';
+import { createApp } from '../../server/app.ts';
+import { type DatabaseClient, openDatabase } from '../../server/db/client.ts';
+import { migrateDatabase } from '../../server/db/migrate.ts';
+import { localActor } from '../../server/features/actor.ts';
+import { createServices, type Services, type ServicesOptions } from '../../server/features/services.ts';
+import { recipe } from '../../shared/schemas/builds.ts';
+import type { SolverDeclaration } from '../../shared/schemas/solver.ts';
+import { createFakeMeasuring, type FakeMeasuring } from './app-fake-measuring.ts';
+import { buildRevision, buildSolver, testEnvironment } from './builders.ts';
+
+export const scratchFolder = mkdtempSync(path.join(tmpdir(), 'tallyroot-app-'));
+let count = 0;
+let template: string | undefined;
+
+/** A path to a fresh copy of a migrated database. Migrated once for all tests of a file. */
+export function freshDatabaseFile(): string {
+  if (template === undefined) {
+    template = path.join(scratchFolder, 'template.db');
+    const client = openDatabase(template);
+    migrateDatabase(client);
+    client.close(); // the last connection to close takes the log back into the file
+  }
+  count += 1;
+  const file = path.join(scratchFolder, `copy-${count}.db`);
+  copyFileSync(template, file);
+  return file;
+}
+
+/** A folder that can be registered as a build. */
+export function makeBuildFolder(given: {
+  solvers?: SolverDeclaration[];
+  adapter?: string;
+  files?: Record<string, string>;
+}): string {
+  count += 1;
+  const folder = path.join(scratchFolder, `build-${count}`);
+  mkdirSync(folder);
+  const content = {
+    library: 'Pocket roots',
+    prepare: [],
+    adapter: given.adapter ?? 'node adapter.mjs',
+    environment: {},
+    solvers: given.solvers ?? [
+      buildSolver(),
+      buildSolver({ name: 'bisection', takes: 'bracket', starts: 0, order: 1 }),
+    ],
+  };
+  // JSON is YAML; tests of the manifest itself are elsewhere.
+  writeFileSync(path.join(folder, 'tallyroot.yaml'), JSON.stringify(content));
+  for (const [name, text] of Object.entries(given.files ?? {})) writeFileSync(path.join(folder, name), text);
+  return folder;
+}
+
+export interface TestApp {
+  client: DatabaseClient;
+  services: Services;
+  app: Express;
+  measuring: FakeMeasuring;
+  jobErrors: unknown[];
+  file: string;
+  close(): Promise<void>;
+}
+
+const open = new Set<TestApp>();
+
+/** The real application on a database of its own; only the measuring is a stand-in unless one is given. */
+export function openTestApp(
+  given: { measuring?: FakeMeasuring; file?: string } & Partial<Pick<ServicesOptions, 'clock'>> = {},
+): TestApp {
+  const file = given.file ?? freshDatabaseFile();
+  const client = openDatabase(file);
+  const measuring = given.measuring ?? createFakeMeasuring();
+  const jobErrors: unknown[] = [];
+  const services = createServices({
+    client,
+    measuring,
+    readManifest: (text) => recipe.parse(JSON.parse(text)),
+    environment: testEnvironment,
+    lanes: 1,
+    onJobError: (_job, error) => jobErrors.push(error),
+    pollMs: 20,
+    ...(given.clock ? { clock: given.clock } : {}),
+  });
+  const logger = pino({ level: 'silent' });
+  const app = createApp({ services, logger, allowedHosts: [] });
+  const opened: TestApp = {
+    client,
+    services,
+    app,
+    measuring,
+    jobErrors,
+    file,
+    async close() {
+      open.delete(opened);
+      await services.jobRunner.stop();
+      client.close();
+    },
+  };
+  open.add(opened);
+  return opened;
+}
+
+/** A library with one build and the small suite of the builders. */
+export async function seedLibrary(app: TestApp, folder = makeBuildFolder({})) {
+  const { services } = app;
+  const library = services.libraries.create(localActor, {
+    slug: 'pocket-roots',
+    name: 'Pocket roots',
+    description: '',
+    homepage: null,
+  });
+  const suite = services.suites.addRevision(localActor, {
+    revision: buildRevision(),
+    source: 'format: 1',
+    builtIn: false,
+    note: '',
+  });
+  const { build } = await services.builds.registerFolder(localActor, library.slug, { folder });
+  return { library, suite: suite.summary, build };
+}
+
+afterAll(async () => {
+  for (const opened of [...open]) await opened.close();
+  rmSync(scratchFolder, { recursive: true, force: true });
+});
