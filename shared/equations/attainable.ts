@@ -6,7 +6,7 @@ import type { Problem } from './problem.ts';
 
 /** Ulps to each side of the rounded root at which the evaluation error is measured. */
 const reach = 16;
-const exactDigits = 50;
+const exactDigits = 40;
 /** Largest share of the bracket (of max(1, |r|) without one) that a flat root's width may be. */
 const flatShare = 1e-2;
 
@@ -71,14 +71,22 @@ export function leadingCoefficient(problem: Problem, root: AttainableRoot): Deci
   return least;
 }
 
-/** Whether f vanishes at r faster than any power that matters: |f(r ± h)| below h⁶⁴ at h = 10⁻³ max(1, |r|). */
+/** Powers beyond this count as flat: no multiplicity that a case may claim comes near it. */
+const flatPower = 64;
+
+/**
+ * Whether f vanishes at r faster than any power that matters: |f(r ± h)| < 2^−64 |f(r ± 2h)| at
+ * h = 10⁻³ max(1, |r|), on both sides. Independent of the scale of f.
+ */
 export function isFlatRoot(problem: Problem, value: string): boolean {
-  const r = new Decimal(value);
+  const Wide = Decimal.clone({ precision: 60, minE: -9e15, maxE: 9e15 });
+  const r = new Wide(value);
   const h = Decimal.max(1, r.abs()).times('1e-3');
+  const f = problem.decimal(60);
   return [h, h.negated()].every((offset) => {
-    const Wide = Decimal.clone({ precision: 60 });
-    const at = problem.decimal(60)(new Wide(r).plus(offset));
-    return at.value.isFinite() && at.value.abs().lt(h.pow(64));
+    const close = f(r.plus(offset)).value.abs();
+    const far = f(r.plus(offset.times(2))).value.abs();
+    return far.isFinite() && close.lt(far.times(new Wide(2).pow(-flatPower)));
   });
 }
 

@@ -7,6 +7,8 @@ import type { Equation } from './tree.ts';
 
 const digits = 40;
 const mostHalvings = 160;
+/** After so many halvings |f| at the ends has to have fallen to less than half, or it is no root. */
+const shrinkEvery = 16;
 /** Precisions tried: the second helps where f is far smaller than its terms, as at roots of odd multiplicity. */
 const precisions = [80, 200] as const;
 
@@ -22,8 +24,21 @@ function isCertified(problem: Problem, root: Decimal, precision: number): boolea
   return changesSign(problem, root, h, precision) === 'yes' || isUniqueSimple(problem, root, h, precision);
 }
 
-/** Halves [x − radius, x + radius] down to 10^−42 of the root where the signs at its ends differ for certain. */
-function bisect(problem: Problem, x: Decimal, radius: Decimal, precision: number): Decimal | null {
+/** Magnitude of f at x in decimals, for telling roots from poles and jumps early. */
+function size(problem: Problem, x: Decimal): Decimal {
+  return problem.decimal(precisions[0])(x).value.abs();
+}
+
+/**
+ * Halves [x − radius, x + radius] down to 10^−42 of the root where the signs at its ends differ for certain.
+ * `doubtful`: more digits may help. `no`: they cannot, f has no change of sign, or does not shrink towards it.
+ */
+function bisect(
+  problem: Problem,
+  x: Decimal,
+  radius: Decimal,
+  precision: number,
+): Decimal | 'doubtful' | 'no' {
   const Wide = Decimal.clone({ precision: 120, minE: -9e15, maxE: 9e15 });
   let low = new Wide(x).minus(radius);
   let high = new Wide(x).plus(radius);
@@ -31,17 +46,23 @@ function bisect(problem: Problem, x: Decimal, radius: Decimal, precision: number
   const right = certainSign(problem, high, precision);
   if (left === 0) return low;
   if (right === 0) return high;
-  if (left === null || right === null || left === right) return null;
-  for (let step = 0; step < mostHalvings; step += 1) {
+  if (left === null || right === null) return 'doubtful';
+  if (left === right) return 'no';
+  let before = Decimal.max(size(problem, low), size(problem, high));
+  for (let step = 1; step <= mostHalvings; step += 1) {
     const middle = low.plus(high).div(2);
     if (high.minus(low).lte(middle.abs().times('1e-42'))) return middle;
     const sign = certainSign(problem, middle, precision);
     if (sign === 0) return middle;
-    if (sign === null) return null;
+    if (sign === null) return 'doubtful';
     if (sign === left) low = middle;
     else high = middle;
+    if (step % shrinkEvery !== 0) continue;
+    const now = Decimal.max(size(problem, low), size(problem, high));
+    if (!now.times(2).lt(before)) return 'no';
+    before = now;
   }
-  return null;
+  return 'no';
 }
 
 /**
@@ -69,7 +90,8 @@ export function certifyNear(
     }
     for (const precision of precisions) {
       const found = bisect(problem, start, reach, precision);
-      if (found === null) continue;
+      if (found === 'no') return null;
+      if (found === 'doubtful') continue;
       const root = new Wide(found.toSignificantDigits(digits + 5));
       if (within(root, start, reach) && isCertified(problem, root, precision)) return root.toString();
     }
