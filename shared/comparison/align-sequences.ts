@@ -6,15 +6,15 @@ export interface EditRow {
 
 /**
  * Differences beyond which the middle of two sequences is not aligned: the memory taken grows with their
- * square (4,500,000 numbers at this limit). Sequences that differ so much have nothing to show side by side.
+ * square (4,000,000 numbers at this limit). Sequences that differ so much have nothing to show side by side.
  */
-const mostDifferences = 3000;
+const mostDifferences = 2000;
 
 /**
  * Aligns two sequences by a longest common subsequence, so that every element stands in one row.
  *
  * Method: the greedy O(nd) algorithm of Myers, Algorithmica 1 (1986) 251–266 (from memory), n the lengths
- * together, d the elements in one sequence only; equal heads and tails are taken off first. Beyond 3000
+ * together, d the elements in one sequence only; equal heads and tails are taken off first. Beyond 2000
  * differences what lies between head and tail is given as all of a, then all of b.
  * `isSame` need not be transitive. Elements of a alone come before those of b alone.
  */

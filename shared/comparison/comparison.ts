@@ -1,7 +1,7 @@
 import type { Allowances } from '../schemas/allowances.ts';
 import type { SolveRecord } from '../schemas/solve.ts';
 import type { SolverDeclaration } from '../schemas/solver.ts';
-import type { Change, QueryFinding, Verdict } from '../schemas/words.ts';
+import type { Change, EvaluationKind, QueryFinding, Verdict } from '../schemas/words.ts';
 
 /** What a comparison needs of a case; a suite's case fits. */
 export interface ComparableCase {
@@ -93,6 +93,8 @@ export interface SolverTotals {
   formerly: string | null;
   presence: 'both' | 'new' | 'gone';
   claim: number | null;
+  /** What it may ask for, as it declares. */
+  uses: readonly EvaluationKind[];
   reference: SolvedCount;
   candidate: SolvedCount;
   /** Pairs that both solved: the only ones whose cost is counted. */

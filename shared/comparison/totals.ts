@@ -39,6 +39,7 @@ export function totalsOf(
       formerly: own.find((pair) => pair.formerly !== null)?.formerly ?? null,
       presence: was.length === 0 ? 'new' : is.length === 0 ? 'gone' : 'both',
       claim: declarations.get(solver)?.order ?? null,
+      uses: declarations.get(solver)?.uses ?? ['f'],
       reference: solvedCount(was),
       candidate: solvedCount(is),
       pairs: both.length,
