@@ -41,7 +41,7 @@ export function evaluationError(problem: Problem, f: CompiledDouble['f'], root: 
   for (const x of near(root)) {
     const computed = f(x);
     if (!Number.isFinite(computed)) continue;
-    const { value } = problem.decimal(exactDigits)(exactDecimal(x));
+    const value = problem.value(exactDigits)(exactDecimal(x));
     if (!value.isFinite()) continue;
     const Wide = Decimal.clone({ precision: exactDigits, minE: -9e15, maxE: 9e15 });
     const error = new Wide(value).minus(exactDecimal(computed)).abs();
@@ -63,7 +63,7 @@ export function leadingCoefficient(problem: Problem, root: AttainableRoot): Deci
   const size = (r.isZero() ? new Wide(1) : r.abs()).times('1e-12');
   let least: Decimal | null = null;
   for (const h of [size, size.negated()]) {
-    const { value } = problem.decimal(precision)(r.plus(h));
+    const value = problem.value(precision)(r.plus(h));
     if (!value.isFinite()) continue;
     const coefficient = new Wide(value).abs().div(size.pow(m));
     if (least === null || coefficient.lt(least)) least = coefficient;
@@ -82,10 +82,10 @@ export function isFlatRoot(problem: Problem, value: string): boolean {
   const Wide = Decimal.clone({ precision: 60, minE: -9e15, maxE: 9e15 });
   const r = new Wide(value);
   const h = Decimal.max(1, r.abs()).times('1e-3');
-  const f = problem.decimal(60);
+  const f = problem.value(60);
   return [h, h.negated()].every((offset) => {
-    const close = f(r.plus(offset)).value.abs();
-    const far = f(r.plus(offset.times(2))).value.abs();
+    const close = f(r.plus(offset)).abs();
+    const far = f(r.plus(offset.times(2))).abs();
     return far.isFinite() && close.lt(far.times(new Wide(2).pow(-flatPower)));
   });
 }

@@ -13,13 +13,6 @@ export function certainSign(problem: Problem, x: Decimal, digits: number): -1 | 
   return value.low.isZero() && value.high.isZero() ? 0 : null;
 }
 
-/** Greatest magnitude that the enclosure of f at x allows; null where f is undefined or unbounded there. */
-function magnitude(problem: Problem, x: Decimal, digits: number): Decimal | null {
-  const { value } = problem.interval(digits)(x, x);
-  if (value === null || !value.low.isFinite() || !value.high.isFinite()) return null;
-  return Decimal.max(value.low.abs(), value.high.abs());
-}
-
 /**
  * Certificate A: f changes sign over [x − h, x + h], both signs certain by outward rounding, and |f| shrinks
  * to at most a half on both sides between a distance of 10²⁰ h and h, which neither a pole nor a jump does.
@@ -36,13 +29,14 @@ export function changesSign(
   const left = certainSign(problem, ends[0], digits);
   const right = certainSign(problem, ends[1], digits);
   if (left === null || right === null || left * right !== -1) return 'no';
+  const f = problem.value(digits);
   const wide = h.times('1e20');
   const far = [new precise(x).minus(wide), new precise(x).plus(wide)] as const;
   for (const side of [0, 1] as const) {
-    const close = magnitude(problem, ends[side], digits);
-    const distant = magnitude(problem, far[side], digits);
-    if (close === null) return 'pole or jump';
-    if (distant !== null && close.times(2).gt(distant)) return 'pole or jump';
+    const close = f(ends[side]).abs();
+    const distant = f(far[side]).abs();
+    if (!close.isFinite()) return 'pole or jump';
+    if (distant.isFinite() && close.times(2).gt(distant)) return 'pole or jump';
   }
   return 'yes';
 }

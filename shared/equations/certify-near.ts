@@ -26,7 +26,7 @@ function isCertified(problem: Problem, root: Decimal, precision: number): boolea
 
 /** Magnitude of f at x in decimals, for telling roots from poles and jumps early. */
 function size(problem: Problem, x: Decimal): Decimal {
-  return problem.decimal(precisions[0])(x).value.abs();
+  return problem.value(precisions[0])(x).abs();
 }
 
 /**

@@ -13,6 +13,8 @@ export const usualDigits = 45;
 /** Digits to which a stated root has to be right before it is refined. */
 export const statedDigits = 40;
 const writtenDigits = 50;
+/** Digits beyond those certified, tried in turn: few suffice unless f is far smaller than its terms. */
+const guards = [20, 60, 160] as const;
 
 export interface Claimed {
   /** The root as stated: a decimal, exact or right to `statedDigits`. */
@@ -65,7 +67,7 @@ export function certifyRoot(problem: Problem, claimed: Claimed): Certification {
   const refined = refine(base, claimed, digits);
   if ('reason' in refined) return refuse(refined.reason);
   const x = refined.root;
-  for (const guard of [guardDigits, 4 * guardDigits]) {
+  for (const guard of guards) {
     const attempt = certifyAt(problem, base, claimed, x, digits, digits + guard);
     if (attempt !== null) return attempt;
   }
@@ -160,7 +162,7 @@ function certifyMultiple(
   if (claimed.simple !== null) {
     const h = halfWidth(x, digits);
     if (changesSign(base, x, h, precision) !== 'yes' || !isUniqueSimple(base, x, h, precision)) {
-      return precision > digits + guardDigits
+      return precision - digits === guards.at(-1)
         ? refuse(`the base ${claimed.simple.text} has no simple root at ${claimed.value}`)
         : null;
     }
@@ -208,8 +210,8 @@ export function vanishingPower(problem: Problem, base: Problem | null, x: Decima
     for (const distance of distances) {
       const offset = scale.times(new Work(10).pow(-distance)).times(side);
       const t = new Work(x).plus(offset);
-      const f = problem.decimal(precision)(t).value;
-      const g = base === null ? offset : base.decimal(precision)(t).value;
+      const f = problem.value(precision)(t);
+      const g = base === null ? offset : base.value(precision)(t);
       if (!f.isFinite() || !g.isFinite() || g.isZero()) return null;
       ratios.push(new Work(f).abs().div(new Work(g).abs().pow(m)));
     }

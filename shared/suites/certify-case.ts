@@ -6,9 +6,9 @@ import { certifyNear } from '../equations/certify-near.ts';
 import { compileDouble } from '../equations/double.ts';
 import { parseEquation } from '../equations/parse-equation.ts';
 import { type Problem, problemOf } from '../equations/problem.ts';
+import { exactDecimal } from '../numerics/root-reference.ts';
 import type { CertifiedRoot } from '../schemas/case.ts';
 import { type CertificationCache, certificationKey } from './certification-cache.ts';
-import { exactDecimalText } from './exact-decimal.ts';
 import type { CaseProblem, PlainCase, StatedRoot } from './write-out.ts';
 
 const signDigits = 80;
@@ -55,12 +55,18 @@ function isInside(value: string, bracket: readonly [string, string]): boolean {
   return new Decimal(value).gte(bracket[0]) && new Decimal(value).lte(bracket[1]);
 }
 
+/** The sign of f at a binary64 x, for certain; 0 also where decimals give exactly 0. */
+function signAt(problem: Problem, x: number): -1 | 0 | 1 | null {
+  const exact = exactDecimal(x);
+  return (
+    certainSign(problem, exact, signDigits) ?? (problem.decimal(signDigits)(exact).value.isZero() ? 0 : null)
+  );
+}
+
 /** What the ends of the bracket do, against the traits that the case claims. */
 function bracketProblem(problem: Problem, plain: PlainCase): string | null {
   if (plain.bracket === null) return null;
-  const [low, high] = plain.bracket.map((end) =>
-    certainSign(problem, new Decimal(exactDecimalText(Number(end), Number.POSITIVE_INFINITY)), signDigits),
-  );
+  const [low, high] = plain.bracket.map((end) => signAt(problem, Number(end)));
   if (low === undefined || high === undefined || low === null || high === null) {
     return 'f has no certain sign at an end of the bracket: it is undefined or unbounded there';
   }
