@@ -1,4 +1,5 @@
 import type { MessagePort } from 'node:worker_threads';
+import type { Equation } from '../../shared/equations/tree.ts';
 import type { SuiteCase } from '../../shared/schemas/case.ts';
 import type { SolveRecord } from '../../shared/schemas/solve.ts';
 import type { SolverDeclaration } from '../../shared/schemas/solver.ts';
@@ -32,6 +33,8 @@ export interface LaneJob {
   queue: SharedArrayBuffer;
   solvers: readonly SolverDeclaration[];
   cases: readonly SuiteCase[];
+  /** Of the cases, one by one: reading them takes a parser that is slow to load in every thread. */
+  equations: readonly Equation[];
   /** The solves to do; each with its number on the wire. */
   work: readonly { id: number; planned: PlannedSolve }[];
   limits: LaneLimits;

@@ -33,7 +33,7 @@ class LaneRunner {
     this.#state = new LaneState(job.epoch, job.state);
     this.#queue = new WorkQueue(job.solvers.length, job.queue);
     this.#path = new PathRecorder(job.limits.pathLines);
-    this.#tools = new CaseTools(job.cases);
+    this.#tools = new CaseTools(job.cases, job.equations);
   }
 
   run(): void {

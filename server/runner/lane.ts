@@ -37,7 +37,8 @@ function takeWorker(): Worker {
 }
 
 function keepWorker(worker: Worker): void {
-  worker.removeAllListeners();
+  // One by one: without its own inner listeners a worker hears nothing any more.
+  for (const name of ['error', 'exit', 'message']) worker.removeAllListeners(name);
   worker.unref();
   worker.once('exit', () => {
     const at = idleWorkers.indexOf(worker);

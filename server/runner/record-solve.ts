@@ -1,5 +1,5 @@
+import { certifyNear } from '../../shared/equations/certify-near.ts';
 import { compileDouble } from '../../shared/equations/double.ts';
-import { parseEquation } from '../../shared/equations/parse-equation.ts';
 import type { Equation } from '../../shared/equations/tree.ts';
 import { correctDigits, nearestRoot } from '../../shared/numerics/digits.ts';
 import { emptyEstimate, estimateOrder, type OrderInput } from '../../shared/numerics/estimate-order.ts';
@@ -22,7 +22,6 @@ import type { Evaluator, RawSolve } from './solve-session.ts';
 export interface CaseTool {
   suiteCase: SuiteCase;
   equation: Equation;
-  parameters: Record<string, number>;
   evaluator: Evaluator;
   roots: JudgedRoot[];
 }
@@ -32,18 +31,22 @@ const KEPT_TOOLS = 8;
 
 export class CaseTools {
   readonly #cases: readonly SuiteCase[];
+  readonly #equations: readonly Equation[];
   readonly #tools = new Map<number, CaseTool>();
 
-  constructor(cases: readonly SuiteCase[]) {
+  /** `equations`: those of the cases, read already. */
+  constructor(cases: readonly SuiteCase[], equations: readonly Equation[]) {
     this.#cases = cases;
+    this.#equations = equations;
   }
 
   of(index: number): CaseTool {
     const known = this.#tools.get(index);
     if (known) return known;
     const suiteCase = this.#cases[index];
-    if (!suiteCase) throw new RangeError(`There is no case ${index}.`);
-    const tool = makeCaseTool(suiteCase);
+    const equation = this.#equations[index];
+    if (!suiteCase || !equation) throw new RangeError(`There is no case ${index}.`);
+    const tool = makeCaseTool(suiteCase, equation);
     const [oldest] = this.#tools.keys();
     if (oldest !== undefined && this.#tools.size >= KEPT_TOOLS) this.#tools.delete(oldest);
     this.#tools.set(index, tool);
@@ -51,14 +54,13 @@ export class CaseTools {
   }
 }
 
-export function makeCaseTool(suiteCase: SuiteCase): CaseTool {
+export function makeCaseTool(suiteCase: SuiteCase, equation: Equation): CaseTool {
   const entries = Object.entries(suiteCase.parameters);
   const parameters = Object.fromEntries(entries.map(([name, text]) => [name, Number(text)]));
-  const equation = parseEquation(suiteCase.equation, Object.keys(parameters));
   const roots = suiteCase.roots.map(({ value, attainable, allowed }) => {
     return { ref: rootReference(value), attainable, allowed };
   });
-  return { suiteCase, equation, parameters, evaluator: compileDouble(equation, parameters), roots };
+  return { suiteCase, equation, evaluator: compileDouble(equation, parameters), roots };
 }
 
 export interface RecordInput {
@@ -183,6 +185,7 @@ function judge(input: RecordInput, claimed: number | null, residual: number | nu
         expectation,
         tolerance: solver.tolerance,
         residual,
+        certifyNear: (x, radius) => certifyNear(tool.equation, tool.suiteCase.parameters, x, radius),
       });
     case 'fail': {
       const remarks: Remark[] = [];

@@ -1,3 +1,4 @@
+import { parseEquation } from '../../shared/equations/parse-equation.ts';
 import { AppError } from '../../shared/errors.ts';
 import type { SuiteCase } from '../../shared/schemas/case.ts';
 import type { Environment } from '../../shared/schemas/measurement.ts';
@@ -86,6 +87,7 @@ class Run {
   readonly #options: RunOptions;
   readonly #work: Work;
   readonly #hooks: RunHooks;
+  readonly #limits: LaneLimits;
   readonly #queue: WorkQueue;
   readonly #order: SolveOrder;
   readonly #log = new LogTail(LOG_LIMIT_BYTES);
@@ -97,6 +99,8 @@ class Run {
     this.#options = options;
     this.#work = work;
     this.#hooks = hooks;
+    const { evaluations, seconds, runSeconds: _, ...others } = options.limits;
+    this.#limits = { ...usualLimits, ...others, evaluations, solveMs: seconds * 1000 };
     this.#queue = new WorkQueue(options.solvers.length);
     const solverOf = work.map(({ planned }) => planned.solver);
     this.#order = new SolveOrder(solverOf, options.solvers.length);
@@ -128,19 +132,16 @@ class Run {
   }
 
   async #runLanes(): Promise<void> {
-    const { solvers, cases, limits, fresh } = this.#options;
-    const laneLimits: LaneLimits = {
-      ...usualLimits,
-      ...limits,
-      evaluations: limits.evaluations,
-      solveMs: limits.seconds * 1000,
-    };
+    const { solvers, cases, fresh } = this.#options;
     const job = {
       queue: this.#queue.shared,
       solvers,
       cases,
+      equations: cases.map((suiteCase) =>
+        parseEquation(suiteCase.equation, Object.keys(suiteCase.parameters)),
+      ),
       work: this.#work,
-      limits: laneLimits,
+      limits: this.#limits,
       isFresh: fresh,
       wantsStarts: this.#hooks.onStart !== undefined,
     };
@@ -156,18 +157,12 @@ class Run {
   }
 
   #makeLane(): Lane {
-    const { adapter: command, folder, environment, limits } = this.#options;
+    const { adapter: command, folder, environment } = this.#options;
     const onLog = (text: string): void => {
       this.#log.push(Buffer.from(text));
       this.#options.onLog?.(text);
     };
-    const laneLimits: LaneLimits = {
-      ...usualLimits,
-      ...limits,
-      evaluations: limits.evaluations,
-      solveMs: limits.seconds * 1000,
-    };
-    return new Lane({ command, folder, environment, onLog }, laneLimits, {
+    return new Lane({ command, folder, environment, onLog }, this.#limits, {
       onReady: (text) => {
         this.#adapterText = text;
       },

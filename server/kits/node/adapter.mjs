@@ -1,8 +1,9 @@
 // Adapter kit for Node.js 18 and later: copy this file into your repository. It has no dependencies.
 // It speaks version 1 of the solver wire: solvers ask for f(x) on standard output and read answers from
 // standard input, line by line. See README.md for how to use it.
-import { readSync, writeSync } from 'node:fs';
+
 import { Console } from 'node:console';
+import { readSync, writeSync } from 'node:fs';
 
 const LF = 10;
 const pauseCell = new Int32Array(new SharedArrayBuffer(4));
@@ -92,7 +93,8 @@ function makeEvaluations(offers, state) {
   const ask = (verb, needs, x) => {
     if (state.isStopped) throw new Stopped();
     const missing = needs.find((need) => !offers.includes(need));
-    if (missing !== undefined) throw new Error(`${missing} is not offered: name it under uses in the manifest`);
+    if (missing !== undefined)
+      throw new Error(`${missing} is not offered: name it under uses in the manifest`);
     write(`${verb} ${formatNumber(x)}`);
     if (readAnswer()) return answer.y;
     state.isStopped = true;
@@ -111,7 +113,8 @@ function makeEvaluations(offers, state) {
 }
 
 function step(x, low, high) {
-  const bracket = low === undefined || high === undefined ? '' : ` ${formatNumber(low)} ${formatNumber(high)}`;
+  const bracket =
+    low === undefined || high === undefined ? '' : ` ${formatNumber(low)} ${formatNumber(high)}`;
   write(`step ${formatNumber(x)}${bracket}`);
 }
 
@@ -145,7 +148,7 @@ function parseNumber(text) {
 
 /** Free text must stay on its line. */
 function oneLine(text) {
-  return text.replace(/[\0-\x1f\x7f]+/g, ' ').slice(0, 200);
+  return text.replace(/\p{Cc}+/gu, ' ').slice(0, 200);
 }
 
 /** The next line without its line feed; null at the end of the input. */
