@@ -4,7 +4,6 @@ import type { Recipe } from '../../shared/schemas/builds.ts';
 import { declareSolver, manifestFile, manifestLimits } from '../../shared/schemas/manifest.ts';
 import { readYaml, type SourcePositions, type YamlPath } from '../../shared/suites/read-yaml.ts';
 
-export const MANIFEST_NAME = 'tallyroot.yaml';
 const DEPTH = 8;
 
 /** Names may look like numbers; they are kept as they are written. */
@@ -14,7 +13,7 @@ const EXACT_KEYS = new Set(['library', 'name', 'aliases']);
  * Reads a manifest. Throws AppError `invalid` with every problem found, each with its line, its column and
  * what was expected there.
  */
-export function readManifest(text: string): { manifest: Recipe } {
+export function readManifest(text: string): Recipe {
   const { value, positions, issues } = readYaml(
     text,
     { bytes: manifestLimits.bytes, depth: DEPTH },
@@ -25,7 +24,7 @@ export function readManifest(text: string): { manifest: Recipe } {
   if (!parsed.success)
     throw refuse(parsed.error.issues.flatMap((issue) => describe(issue, value, positions)));
   const { library, prepare, adapter, environment, solvers } = parsed.data;
-  return { manifest: { library, prepare, adapter, environment, solvers: solvers.map(declareSolver) } };
+  return { library, prepare, adapter, environment, solvers: solvers.map(declareSolver) };
 }
 
 function refuse(issues: Issue[]): AppError {

@@ -28,7 +28,7 @@ function withSolver(lines: string): string {
 
 describe('readManifest', () => {
   it('fills in the defaults of a solver', () => {
-    expect(readManifest(smallest).manifest).toEqual({
+    expect(readManifest(smallest)).toEqual({
       library: 'Pocket roots',
       prepare: [],
       adapter: 'node adapter.mjs',
@@ -70,7 +70,7 @@ solvers:
     aliases: [newton_v1, 1.5]
     digits: true
 `;
-    const { manifest } = readManifest(text);
+    const manifest = readManifest(text);
     expect(manifest.environment).toEqual({ OMP_NUM_THREADS: '1' });
     expect(manifest.prepare).toEqual(['npm ci --ignore-scripts']);
     expect(manifest.solvers[0]).toEqual({
@@ -97,7 +97,7 @@ solvers:
     ['takes: point', 'point', 0],
     ['takes: [point]\nuses: [f, jac]', 'point', 0],
   ])('understands %s', (lines, takes, starts) => {
-    expect(readManifest(withSolver(lines)).manifest.solvers[0]).toMatchObject({ takes, starts });
+    expect(readManifest(withSolver(lines)).solvers[0]).toMatchObject({ takes, starts });
   });
 
   it('reports all problems with line and column, not the first alone', () => {
@@ -188,7 +188,7 @@ solvers:
       const solvers = Array.from({ length: count }, (_, at) => `  - { name: s${at}, takes: bracket }\n`);
       return `format: 1\nlibrary: L\nadapter: a\nsolvers:\n${solvers.join('')}`;
     };
-    expect(readManifest(of(200)).manifest.solvers).toHaveLength(200);
+    expect(readManifest(of(200)).solvers).toHaveLength(200);
     expect(issuesOf(of(201))).toMatchObject([{ path: 'solvers', line: 5 }]);
   });
 });
