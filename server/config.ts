@@ -41,6 +41,9 @@ export interface Config {
   logLevel: z.output<typeof environmentVariables>['LOG_LEVEL'];
 }
 
+/** Where programs are found: the one variable that adapters get from Tallyroot's own environment. */
+export const searchPath = process.env.PATH ?? '/usr/bin:/bin';
+
 /** Reads the environment once; nothing else looks at it. */
 export function readConfig(env: Record<string, string | undefined>): Config {
   const parsed = environmentVariables.safeParse(env);

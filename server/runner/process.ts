@@ -5,6 +5,7 @@ import { Socket } from 'node:net';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { promisify } from 'node:util';
+import { searchPath } from '../config.ts';
 import { adapterEnvironment, describeExit, type Exit, shellLine } from './adapter-environment.ts';
 import { GUARDIAN_SCRIPT } from './guardian-script.ts';
 import { findLeftovers, isGroupAlive, signalGroup, signalProcess } from './leftovers.ts';
@@ -47,7 +48,7 @@ function tellGuardian(line: string): void {
       stdio: ['pipe', 'ignore', 'ignore'],
       detached: true,
       cwd: '/',
-      env: { PATH: process.env.PATH ?? '/usr/bin:/bin' },
+      env: { PATH: searchPath },
     });
     child.on('exit', () => {
       if (guardian === child) guardian = null;
@@ -149,7 +150,7 @@ export class AdapterProcess {
     this.inPath = join(folder, 'in');
     const { line, isPlain } = shellLine(options.command);
     this.#isShell = !isPlain;
-    const own = { path: process.env.PATH ?? '/usr/bin:/bin', home: join(folder, 'home'), mark: this.#mark };
+    const own = { path: searchPath, home: join(folder, 'home'), mark: this.#mark };
     const child = spawn('/bin/sh', ['-c', line], {
       cwd: options.folder,
       detached: true,
