@@ -1,6 +1,7 @@
 import type { Change } from '../schemas/words.ts';
 import type { Comparison, Pair, SolverTotals } from './comparison.ts';
 import { fixed, fromTo, list, name, percent, type RichText, type Span, say } from './rich-text.ts';
+import { hasChange } from './verdict.ts';
 
 /** A complete statement without its full stop; `isLong` where it holds a colon, and so must come last. */
 export interface Clause {
@@ -44,7 +45,7 @@ interface Finding {
   where: RichText;
 }
 
-/** Pairs with a change by solver; from four solvers on one statement for all. */
+/** Pairs with a change, be it their gravest or not, by solver; from four solvers on one statement for all. */
 function perSolver(
   comparison: Comparison,
   change: Change,
@@ -67,7 +68,7 @@ function findingsOf(comparison: Comparison, change: Change): Finding[] {
   }
   const found = new Map<string, Pair[]>();
   for (const pair of comparison.pairs) {
-    if (pair.change !== change) continue;
+    if (!hasChange(pair, change)) continue;
     const own = found.get(pair.solver);
     if (own === undefined) found.set(pair.solver, [pair]);
     else own.push(pair);
@@ -183,8 +184,9 @@ function costlierOne({ solver, totals, pairs, first, where }: Finding): RichText
     return say`${solver} needs ${percent(change)} more evaluations${over(totals)}`;
   }
   const more = first.difference ?? 0;
-  const evaluations = more === 1 ? 'evaluation' : 'evaluations';
-  if (pairs.length === 1) return say`${solver} needs ${more} more ${evaluations} on ${where}`;
+  if (pairs.length === 1) {
+    return say`${solver} needs ${more} more ${more === 1 ? 'evaluation' : 'evaluations'} on ${where}`;
+  }
   return say`${solver} needs more evaluations on ${where}, up to ${more} more`;
 }
 

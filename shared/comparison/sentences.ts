@@ -1,6 +1,8 @@
 import { askedAgain, badClauses, type Clause, goodClauses, repeatedCause } from './clauses.ts';
-import type { Comparison, SolverTotals } from './comparison.ts';
+import type { Comparison, FindingCount, SolverTotals } from './comparison.ts';
 import { list, name, paragraph, plainText, type RichText, say } from './rich-text.ts';
+
+import { hasChange } from './verdict.ts';
 
 export interface ComparisonText {
   /** One sentence that says what was found, gravest first. */
@@ -25,7 +27,7 @@ export function describeComparison(comparison: Comparison): ComparisonText {
       .map((text) => [{ text }]),
     ...rest.map(({ text }) => say`${text}.`),
     ...inReturn(bad.length > 0, good),
-    ...repeatsAsBefore(comparison),
+    ...repeatsToo(comparison),
     ...unchangedSolvers(comparison),
     ...comingAndGoing(comparison),
   ].filter((sentence) => plainText(sentence) !== plainText(verdict));
@@ -52,11 +54,9 @@ function headOf(
   if (comparison.verdict === 'could not tell') return { verdict: openVerdict(comparison), rest: [...bad] };
   if (bad.length > 0) {
     const { text, rest } = join(bad);
-    return {
-      verdict:
-        comparison.verdict === 'within allowances' ? say`${text}, within the allowances.` : say`${text}.`,
-      rest,
-    };
+    if (comparison.verdict === 'beyond allowances') return { verdict: say`${text}.`, rest };
+    const what = bad.length === 1 ? 'it' : bad.length === 2 ? 'both' : 'all of it';
+    return { verdict: say`${text}; the allowances permit ${what}.`, rest };
   }
   if (good.length > 0) return { verdict: say`${join(good).text}, and nothing got worse.`, rest: [] };
   return { verdict: quietVerdict(comparison, compared), rest: [] };
@@ -112,21 +112,29 @@ function inReturn(isBad: boolean, good: readonly Clause[]): RichText[] {
   return good.map(({ text }, i) => (i === 0 ? say`In return, ${text}.` : say`${text}.`));
 }
 
-/** Solvers that ask again at an x they have in most solves, where the reference does it no less. */
-function repeatsAsBefore({ totals }: Comparison): RichText[] {
+/** Solvers that ask again at an x they have in most solves, where no statement about cost has named it. */
+function repeatsToo({ totals, pairs }: Comparison): RichText[] {
+  const costlier = new Set(pairs.filter((pair) => hasChange(pair, 'costlier')).map((pair) => pair.solver));
   return totals.flatMap((one): RichText[] => {
     const { reference, candidate } = one.findings.repeated;
-    const isMost = candidate.solves * 2 > candidate.of;
-    if (!isMost || repeatedCause(one) !== null || one.presence !== 'both' || reference.evaluations === 0)
-      return [];
-    const same = candidate.evaluations === reference.evaluations;
-    const than = same
-      ? say`as the reference does`
-      : say`${candidate.evaluations} times (reference: ${reference.evaluations})`;
+    const isNamed = costlier.has(one.solver) && repeatedCause(one) !== null;
+    if (candidate.solves * 2 <= candidate.of || isNamed || one.presence === 'gone') return [];
+    const where = candidate.of === 1 ? say`` : say` in ${candidate.solves} of its ${candidate.of} solves`;
     return [
-      say`${name(one.solver)} ${askedAgain(one.uses)} in ${candidate.solves} of its ${candidate.of} solves, ${than}.`,
+      say`${name(one.solver)} ${askedAgain(one.uses)}${where}${beside(one.presence, reference, candidate)}.`,
     ];
   });
+}
+
+function beside(
+  presence: SolverTotals['presence'],
+  reference: FindingCount,
+  candidate: FindingCount,
+): RichText {
+  if (presence === 'new') return [];
+  if (reference.evaluations === 0) return say`, which the reference never does`;
+  if (reference.evaluations === candidate.evaluations) return say`, as the reference does`;
+  return say`, ${candidate.evaluations} times in all (reference: ${reference.evaluations})`;
 }
 
 /** Which solvers did not change, where others did. */
