@@ -20,7 +20,7 @@ export function useKeys(keys: KeyMap): void {
     function handleKeyDown(event: KeyboardEvent): void {
       if (event.defaultPrevented || event.ctrlKey || event.metaKey || event.altKey) return;
       if (isWriting(event.target)) return;
-      const run = latest.current[event.key];
+      const run = latest.current[event.key === 'Escape' ? 'escape' : event.key];
       if (run === undefined) return;
       event.preventDefault();
       run();

@@ -1,0 +1,212 @@
+import { useMemo } from 'react';
+import { Link, useNavigate } from 'react-router';
+import { changesOf } from '../../../shared/comparison/change.ts';
+import { isRightlyRefused } from '../../../shared/numerics/judge-claim.ts';
+import { defaultAllowances } from '../../../shared/schemas/allowances.ts';
+import type { SuiteCase } from '../../../shared/schemas/case.ts';
+import type { RunDetail, SolveDetail } from '../../../shared/schemas/runs.ts';
+import { LargeStrip, type LargeStripRow } from '../../components/digit-strip/large-strip.tsx';
+import { ChangeWord } from '../../components/marks/change-word.tsx';
+import { changeColour } from '../../components/marks/change-words.ts';
+import { OutcomeWord } from '../../components/marks/outcome-word.tsx';
+import { Entry } from '../../components/sheet/entry.tsx';
+import { Page } from '../../components/sheet/page.tsx';
+import { VerdictBlock } from '../../components/sheet/verdict-block.tsx';
+import { RichText } from '../../components/ui/rich-text.tsx';
+import { StateNote } from '../../components/ui/state-note.tsx';
+import { HomeCommand } from '../../features/solves/home-command.tsx';
+import { pathRows } from '../../features/solves/path-rows.ts';
+import { PathTable } from '../../features/solves/path-table.tsx';
+import { findingRows } from '../../features/solves/query-findings.ts';
+import { SolveFacts } from '../../features/solves/solve-facts.tsx';
+import { pairOfSolves, pairSentence } from '../../features/solves/solve-pair.ts';
+import { aloneSentence, pairLead } from '../../features/solves/solve-sentence.ts';
+import { type SolveSide, solveSide } from '../../features/solves/solve-side.ts';
+import { formatCommit } from '../../lib/format.ts';
+import { useKeys } from '../../lib/use-keys.ts';
+import { useViewState } from '../../lib/use-view-state.ts';
+import { paths } from '../../paths.ts';
+import { SolvePlots } from './solve-plots.tsx';
+
+export interface SolveSheetProps {
+  solve: SolveDetail;
+  reference: SolveDetail | null;
+  run: RunDetail;
+  suiteCase: SuiteCase;
+  /** Where Escape leads: the comparison or the run that the reader came from. */
+  backTo: string;
+}
+
+function stripRow(side: SolveSide, label: string, isReference: boolean): LargeStripRow[] {
+  return side.picture.kind === 'strip'
+    ? [{ label, strip: side.picture.strip, isReference, evaluations: side.solve.evaluations }]
+    : [];
+}
+
+function jumpTo(step: 'first' | 'next'): void {
+  const rows = [...document.querySelectorAll<HTMLElement>('tr[data-differs]')];
+  const at = rows.findIndex((row) => row.matches(':focus'));
+  const row = step === 'first' ? rows[0] : (rows[at + 1] ?? rows[0]);
+  row?.focus();
+  row?.scrollIntoView({ block: 'center' });
+}
+
+/** A solve, alone or beside the reference's: strips, path, plots, query check, the command to repeat it. */
+export function SolveSheet({ solve, reference, run, suiteCase, backTo }: SolveSheetProps) {
+  const view = useViewState();
+  const navigate = useNavigate();
+  const isHex = view.get('bits') === 'hex';
+  const candidateSide = useMemo(() => solveSide(solve, suiteCase), [solve, suiteCase]);
+  const referenceSide = useMemo(
+    () => (reference === null ? null : solveSide(reference, suiteCase)),
+    [reference, suiteCase],
+  );
+  const rows = useMemo(() => pathRows(referenceSide, candidateSide), [referenceSide, candidateSide]);
+  useKeys({
+    d: () => jumpTo('first'),
+    n: () => jumpTo('next'),
+    x: () => view.set({ bits: isHex ? '' : 'hex' }),
+    escape: () => void navigate(backTo),
+  });
+  const pair = useMemo(
+    () => (reference === null ? null : pairOfSolves(reference, solve, suiteCase)),
+    [reference, solve, suiteCase],
+  );
+  const attainable = candidateSide.picture.kind === 'strip' ? candidateSide.picture.strip.attainable : null;
+  const strips = [
+    ...(referenceSide === null ? [] : stripRow(referenceSide, 'reference', true)),
+    ...stripRow(candidateSide, referenceSide === null ? solve.solver : 'candidate', false),
+  ];
+  const said = solve.remarks.filter((remark) => !['rightly refused', 'path cut'].includes(remark.code));
+  const hasRoots = suiteCase.roots.length > 0;
+  const name = `${solve.solver} on ${solve.case}`;
+  const command = `npm run tallyroot -- trace ${solve.solver} ${solve.case} --run ${solve.run}${solve.start === null || suiteCase.starts.length < 2 ? '' : ` --start ${solve.start + 1}`}`;
+  return (
+    <Page
+      title={name}
+      trail={[
+        { label: run.library, to: paths.library(run.library) },
+        {
+          label: `Build ${formatCommit(run.build.commit ?? run.build.label)}`,
+          to: paths.build(run.build.id),
+        },
+        { label: `Run ${run.id}`, to: paths.run(run.id) },
+        { label: name },
+      ]}
+      keys={[
+        ...(reference === null
+          ? []
+          : [
+              { keys: ['d'], does: 'to the first difference' },
+              { keys: ['n'], does: 'next difference' },
+            ]),
+        { keys: ['x'], does: isHex ? 'decimal figures' : 'exact hexadecimal' },
+        { keys: ['y'], does: 'copy the command' },
+        { keys: ['esc'], does: 'back' },
+      ]}
+    >
+      <VerdictBlock
+        sign={
+          pair === null ? (
+            <OutcomeWord outcome={solve.outcome} isRightlyRefused={isRightlyRefused(solve)} />
+          ) : (
+            <ChangeWord change={pair.change} />
+          )
+        }
+        colour={pair === null ? undefined : changeColour[pair.change]}
+        note={
+          pair !== null && pair.others.length > 0 ? (
+            <p className="flex flex-wrap gap-x-3">
+              {pair.others.map((other) => (
+                <ChangeWord key={other} change={other} />
+              ))}
+            </p>
+          ) : undefined
+        }
+        sentence={<RichText pieces={pair === null ? aloneSentence(solve) : pairSentence(pair, solve)} />}
+        lead={
+          reference === null
+            ? said.map((remark) => remark.text).join(' ') || undefined
+            : `${pairLead(reference, solve, solve.declaration.order)} ${said.map((remark) => remark.text).join(' ')}`
+        }
+      >
+        <SolveFacts
+          solve={solve}
+          suiteCase={suiteCase}
+          caseHref={paths.suiteCase(run.suite.slug, suiteCase.id, run.suite.revision)}
+          budget={run.settings.evaluations}
+        />
+      </VerdictBlock>
+      <Entry
+        title="Digit strip"
+        note={
+          <p>
+            One stroke an evaluation, at the correct digits its x has. A foot below the line: asked again at
+            the same x.
+          </p>
+        }
+      >
+        {strips.length > 0 ? (
+          <LargeStrip rows={strips} attainable={attainable} />
+        ) : (
+          <StateNote title={hasRoots ? 'No path was kept' : 'No root to measure against'}>
+            {hasRoots
+              ? 'Counts and roots can be read, lines cannot.'
+              : `${suiteCase.id} has no certified root, so no digits are drawn. Refusing is right here and counts as rightly refused.`}
+          </StateNote>
+        )}
+      </Entry>
+      <Entry title="Path">
+        <p className="text-note leading-[20px] text-ink-3">
+          {referenceSide === null
+            ? 'Every evaluation in order, with the correct digits of its x. The stroke at the right stands at them.'
+            : 'Places that differ are underlined. A dot: the other build asked here, this one did not. The stroke at the right stands at the correct digits.'}
+        </p>
+      </Entry>
+      <section className="ledger pt-2" aria-label="Path, line by line">
+        <div className="max-wide:hidden" />
+        <div className="min-w-0">
+          {rows.length === 0 ? (
+            <StateNote title="Nothing was asked">The solver ended before it asked for a value.</StateNote>
+          ) : (
+            <PathTable rows={rows} reference={referenceSide} candidate={candidateSide} isHex={isHex} />
+          )}
+          {candidateSide.cut > 0 && (
+            <p className="pt-2 text-note text-ink-3">
+              The path was longer than what is kept: {candidateSide.cut} lines were cut.
+            </p>
+          )}
+        </div>
+      </section>
+      {candidateSide.hasPath && (
+        <Entry title="Plots" note="Both are also in the table above.">
+          <SolvePlots
+            reference={referenceSide}
+            candidate={candidateSide}
+            suiteCase={suiteCase}
+            attainable={attainable}
+          />
+        </Entry>
+      )}
+      <Entry title="Query check" note="What the path shows without being asked. Findings, not failures.">
+        <ul className="finds">
+          {findingRows(referenceSide, candidateSide, suiteCase).map((row) => (
+            <li key={row.term}>
+              <b className="font-medium">{row.term}</b>
+              <span className={row.isQuiet ? 'text-table text-ink-3' : ''}>
+                <RichText pieces={row.pieces} />
+              </span>
+            </li>
+          ))}
+        </ul>
+      </Entry>
+      <Entry title="At home" note="Prints this path from the results that are stored on this machine.">
+        <HomeCommand command={command} />
+        <p className="text-note text-ink-3">
+          <Link to={paths.suiteCase(run.suite.slug, suiteCase.id, run.suite.revision)}>The case</Link> has the
+          equation and its starts, to type by hand.
+        </p>
+      </Entry>
+    </Page>
+  );
+}
