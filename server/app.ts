@@ -3,6 +3,7 @@ import type { Logger } from 'pino';
 import { allowancesRoutes } from './features/allowances/allowances.routes.ts';
 import { auditRoutes } from './features/audit/audit.routes.ts';
 import { buildsRoutes } from './features/builds/builds.routes.ts';
+import { comparisonsRoutes } from './features/comparisons/comparisons.routes.ts';
 import { librariesRoutes } from './features/libraries/libraries.routes.ts';
 import { referencesRoutes } from './features/references/references.routes.ts';
 import { runsRoutes } from './features/runs/runs.routes.ts';
@@ -46,6 +47,7 @@ function apiRouter(services: Services): Router {
   api.use(allowancesRoutes(services.allowances));
   api.use(runsRoutes(services.runs, services.solves, services.bus));
   api.use(referencesRoutes(services.references));
+  api.use(comparisonsRoutes(services.comparisons));
   api.use(auditRoutes(services.audit));
   api.use(noSuchRoute);
   return api;

@@ -1,3 +1,4 @@
+import { matchNames } from '../../shared/comparison/pair.ts';
 import type { Environment } from '../../shared/schemas/measurement.ts';
 import { solveKey } from '../../shared/schemas/solve.ts';
 import type { DatabaseClient } from '../db/client.ts';
@@ -9,6 +10,8 @@ import { createAllowancesService } from './allowances/allowances.service.ts';
 import { createAuditService } from './audit/audit.service.ts';
 import type { ReadManifest } from './builds/build-folder.ts';
 import { createBuildsService } from './builds/builds.service.ts';
+import { loadReferenceSide, loadRunSide } from './comparisons/comparable.ts';
+import { createComparisonsService } from './comparisons/comparisons.service.ts';
 import { createLibrariesService } from './libraries/libraries.service.ts';
 import { createReferencesRepo } from './references/references.repo.ts';
 import { createReferencesService, platformOf } from './references/references.service.ts';
@@ -91,16 +94,23 @@ export function createServices(options: ServicesOptions) {
     decodePath: measuring.decodePath,
   });
 
+  const comparisons = createComparisonsService({ runs, runSolves, references, allowances });
+
+  const sides = { runs, runSolves, references };
+  /** What a run is compared with, under the names that its own build has for the solvers. */
   function readBase(run: RunRow): BaseSolves | null {
-    if (run.baseRunId !== null) {
-      const solvesOfBase = runSolves.readAll(runs.requireRun(run.baseRunId));
-      return new Map(solvesOfBase.map((solve) => [solveKey(solve), solve]));
-    }
-    if (run.baseReferenceId !== null) {
-      const entries = references.readEntries(run.baseReferenceId);
-      return new Map(entries.map((entry) => [solveKey(entry), entry.solve]));
-    }
-    return null;
+    const { baseRunId, baseReferenceId } = run;
+    if (baseRunId === null && baseReferenceId === null) return null;
+    const side =
+      baseRunId === null ? loadReferenceSide(sides, baseReferenceId ?? 0) : loadRunSide(sides, baseRunId);
+    const declarations = runSolves.keysOf(run).solvers.map((solver) => solver.declaration);
+    const { now } = matchNames(side.run.solvers, declarations);
+    return new Map(
+      side.run.solves.map((solve) => [
+        solveKey({ ...solve, solver: now.get(solve.solver) ?? solve.solver }),
+        solve,
+      ]),
+    );
   }
 
   const jobRunner = createJobRunner({
@@ -133,6 +143,7 @@ export function createServices(options: ServicesOptions) {
     suites,
     allowances,
     references,
+    comparisons,
     runs,
     solves,
     runSolves,

@@ -1,4 +1,4 @@
-import type { Request, Response } from 'express';
+import type { Response } from 'express';
 import type { ServerEvent } from '../../shared/schemas/events.ts';
 import type { EventBus } from '../jobs/event-bus.ts';
 
@@ -13,7 +13,7 @@ export interface EventStreamOptions {
 }
 
 /** Sends events to one client (server-sent events, as the HTML standard has them) until it leaves. */
-export function sendEvents(request: Request, response: Response, options: EventStreamOptions): void {
+export function sendEvents(response: Response, options: EventStreamOptions): void {
   const { bus, filter = () => true, keepAliveMs = 20_000, throttleMs = 200 } = options;
   response.status(200).set({
     'Content-Type': 'text/event-stream',
@@ -54,10 +54,10 @@ export function sendEvents(request: Request, response: Response, options: EventS
     if (filter(event)) offer(event);
   });
   const keepAlive = setInterval(() => response.write(': still here\n\n'), keepAliveMs);
-  request.on('close', () => {
+  response.on('close', () => {
     unsubscribe();
     clearInterval(keepAlive);
     for (const timer of timers.values()) clearTimeout(timer);
-    response.end();
+    timers.clear();
   });
 }

@@ -20,7 +20,7 @@ import type { RunSolves } from '../runs/run-solves.ts';
 import type { RunRow, RunsRepo } from '../runs/runs.repo.ts';
 import type { SuitesService } from '../suites/suites.service.ts';
 import { presentEntry, presentReference } from './references.present.ts';
-import type { NamedReference, NewEntry, ReferencesRepo } from './references.repo.ts';
+import type { ChainRow, EntryRow, NamedReference, NewEntry, ReferenceRevisionRow, ReferencesRepo } from './references.repo.ts';
 
 /** Reference results are kept apart by platform: other arithmetic, other paths. */
 export function platformOf(environment: Pick<Environment, 'platform' | 'arch'>): string {
@@ -161,6 +161,11 @@ export function createReferencesService(deps: {
         })
         .all();
       return toPage(rows, query.limit, (row) => [row.revision.id], presentReference);
+    },
+    /** The rows of all that holds as of a revision, for comparisons. */
+    readRows(id: number): { chain: ChainRow; revision: ReferenceRevisionRow; rows: EntryRow[] } {
+      const { chain, revision } = requireNamed(id);
+      return { chain, revision, rows: repo.readEntries({ chain: chain.id, number: revision.number }) };
     },
     /** All that holds as of a revision, by solver, case and start. */
     readEntries(id: number): ReferenceEntryView[] {

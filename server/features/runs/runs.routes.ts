@@ -43,12 +43,12 @@ export function runsRoutes(runs: RunsService, solves: SolvesService, bus: EventB
   router.get('/runs/:run/events', (request, response) => {
     const { run } = parseRequest(byId, request.params, 'address');
     const { library, status, phase, progress } = runs.get(run);
-    sendEvents(request, response, {
+    sendEvents(response, {
       bus,
       first: { kind: 'run', run, library, status, phase, progress },
       filter: (event) => event.kind === 'run' && event.run === run,
     });
   });
-  router.get('/events', (request, response) => sendEvents(request, response, { bus }));
+  router.get('/events', (_request, response) => sendEvents(response, { bus }));
   return router;
 }
