@@ -134,7 +134,8 @@ class Functions implements DecimalFunctions {
 
   call(name: CallName, a: Decimal, b: Decimal | undefined): Decimal {
     if (a.isNaN() || b?.isNaN()) return this.#undefined;
-    return this.checked(this.#call(name, new this.Number(a), b ?? this.#one));
+    // Methods of a decimal round as its own constructor says, and arguments come from others.
+    return this.checked(this.#call(name, new this.Number(a), b ? new this.Number(b) : this.#one));
   }
 
   #call(name: CallName, a: Decimal, b: Decimal): Decimal {

@@ -67,8 +67,8 @@ export class Intervals {
       [a.high, b.high],
     ];
     return this.checked(
-      Decimal.min(...pairs.map(([left, right]) => this.Down.mul(left, right))),
-      Decimal.max(...pairs.map(([left, right]) => this.Up.mul(left, right))),
+      this.functions.Number.min(...pairs.map(([left, right]) => this.Down.mul(left, right))),
+      this.functions.Number.max(...pairs.map(([left, right]) => this.Up.mul(left, right))),
     );
   }
 
@@ -81,8 +81,8 @@ export class Intervals {
       [a.high, b.high],
     ];
     return this.checked(
-      Decimal.min(...pairs.map(([left, right]) => this.Down.div(left, right))),
-      Decimal.max(...pairs.map(([left, right]) => this.Up.div(left, right))),
+      this.functions.Number.min(...pairs.map(([left, right]) => this.Down.div(left, right))),
+      this.functions.Number.max(...pairs.map(([left, right]) => this.Up.div(left, right))),
     );
   }
 
@@ -91,13 +91,13 @@ export class Intervals {
   }
 
   hull(a: Interval, b: Interval): Interval {
-    return { low: Decimal.min(a.low, b.low), high: Decimal.max(a.high, b.high) };
+    return { low: this.functions.Number.min(a.low, b.low), high: this.functions.Number.max(a.high, b.high) };
   }
 
   /** The least and the greatest of some values, widened; null where one is undefined. */
   #span(values: readonly Decimal[]): Interval | null {
     if (values.some((value) => value.isNaN())) return null;
-    return this.widen(Decimal.min(...values), Decimal.max(...values));
+    return this.widen(this.functions.Number.min(...values), this.functions.Number.max(...values));
   }
 
   /** t^n is monotone on either side of 0, so the ends, and 0 where it lies inside, decide. */
@@ -128,9 +128,13 @@ export class Intervals {
     const at = (x: Decimal, y?: Decimal) => this.functions.call(name, x, y);
     switch (name) {
       case 'min':
-        return b ? { low: Decimal.min(a.low, b.low), high: Decimal.min(a.high, b.high) } : null;
+        return b
+          ? { low: this.functions.Number.min(a.low, b.low), high: this.functions.Number.min(a.high, b.high) }
+          : null;
       case 'max':
-        return b ? { low: Decimal.max(a.low, b.low), high: Decimal.max(a.high, b.high) } : null;
+        return b
+          ? { low: this.functions.Number.max(a.low, b.low), high: this.functions.Number.max(a.high, b.high) }
+          : null;
       case 'abs':
         return this.magnitude(a);
       case 'sign':
@@ -168,12 +172,12 @@ export class Intervals {
 
   magnitude(a: Interval): Interval {
     const [low, high] = [a.low.abs(), a.high.abs()];
-    const most = Decimal.max(low, high);
-    return { low: this.contains(a, 0) ? new this.Down(0) : Decimal.min(low, high), high: most };
+    const most = this.functions.Number.max(low, high);
+    return { low: this.contains(a, 0) ? new this.Down(0) : this.functions.Number.min(low, high), high: most };
   }
 
   #clip(a: Interval): Interval {
-    return { low: Decimal.max(a.low, -1), high: Decimal.min(a.high, 1) };
+    return { low: this.functions.Number.max(a.low, -1), high: this.functions.Number.min(a.high, 1) };
   }
 
   /** sin and cos change no faster than their argument: the value in the middle, more or less half the width. */
@@ -181,7 +185,7 @@ export class Intervals {
     const width = this.Up.sub(a.high, a.low);
     if (width.gte(2)) return { low: new this.Down(-1), high: new this.Up(1) };
     const middle = width.isZero() ? a.low : this.functions.Number.add(a.low, a.high).div(2);
-    const reach = Decimal.max(this.Up.sub(a.high, middle), this.Up.sub(middle, a.low));
+    const reach = this.functions.Number.max(this.Up.sub(a.high, middle), this.Up.sub(middle, a.low));
     const value = this.functions.call(name, middle, undefined);
     const core = this.widen(value, value);
     return core && this.#clip({ low: this.Down.sub(core.low, reach), high: this.Up.add(core.high, reach) });

@@ -44,7 +44,8 @@ export function compileInterval(
     const [from, to] = [new intervals.Down(low), new intervals.Up(high)];
     if (!from.lte(to)) throw new RangeError('the low end lies above the high end');
     const [value, derivative] = runProgram(program, arithmetic, [intervals.checked(from, to)]);
-    return { value: value ?? null, derivative: derivative ?? null };
+    // Where the value is open, as across the cut of atan2, f may jump, whatever the formal derivative says.
+    return { value: value ?? null, derivative: value ? (derivative ?? null) : null };
   };
 }
 
