@@ -7,6 +7,8 @@ import type { Problem } from './problem.ts';
 /** Ulps to each side of the rounded root at which the evaluation error is measured. */
 const reach = 16;
 const exactDigits = 40;
+/** Exact doubles near 0 have hundreds of digits; f cannot tell x from x rounded to so many. */
+const pointDigits = 120;
 /** Largest share of the bracket (of max(1, |r|) without one) that a flat root's width may be. */
 const flatShare = 1e-2;
 
@@ -37,11 +39,12 @@ function near(root: number): number[] {
 
 /** η: the largest |f in binary64 − f in decimals| at r rounded and at ±1 … ±16 ulps, where both are defined. */
 export function evaluationError(problem: Problem, f: CompiledDouble['f'], root: number): Decimal {
+  const exact = problem.value(exactDigits);
   let worst = new Decimal(0);
   for (const x of near(root)) {
     const computed = f(x);
     if (!Number.isFinite(computed)) continue;
-    const value = problem.value(exactDigits)(exactDecimal(x));
+    const value = exact(exactDecimal(x).toSignificantDigits(pointDigits));
     if (!value.isFinite()) continue;
     const Wide = Decimal.clone({ precision: exactDigits, minE: -9e15, maxE: 9e15 });
     const error = new Wide(value).minus(exactDecimal(computed)).abs();
@@ -90,27 +93,48 @@ export function isFlatRoot(problem: Problem, value: string): boolean {
   });
 }
 
-/** Half the width of the stretch around r on which binary64 f is exactly 0, at most `most` to each side. */
-function flatHalfWidth(f: CompiledDouble['f'], root: number, most: number): number {
+/** Whether |f| stays where it is on a side of r while the distance falls from 10⁻¹² to 10⁻²⁴ |r|. */
+function jumps(problem: Problem, value: string): boolean {
+  const Wide = Decimal.clone({ precision: 80, minE: -9e15, maxE: 9e15 });
+  const r = new Wide(value);
+  const unit = r.isZero() ? new Wide(1) : r.abs();
+  const f = problem.value(60);
+  return [1, -1].some((side) => {
+    const far = f(r.plus(unit.times(side * 1e-12))).abs();
+    const close = f(r.plus(unit.times(side * 1e-24))).abs();
+    return far.isFinite() && close.isFinite() && !far.isZero() && close.times(2).gt(far);
+  });
+}
+
+/**
+ * Half the width of the stretch around r on which binary64 f is exactly 0, at most `most` to each side; by
+ * halving, to nine digits.
+ */
+function zeroHalfWidth(f: CompiledDouble['f'], root: number, most: number): number {
   const side = (sign: 1 | -1): number => {
     if (f(root + sign * most) === 0) return most;
     let inside = 0;
     let outside = most;
-    // Halving until the ends are as close as the width's own rounding; f is 0 on one connected stretch.
-    for (let step = 0; step < 200 && outside - inside > 1e-12 * most; step += 1) {
-      const middle = (inside + outside) / 2;
+    // 1100 halvings reach from the largest binary64 to the least.
+    for (let step = 0; step < 1100 && outside - inside > 1e-9 * outside; step += 1) {
+      const middle = inside + (outside - inside) / 2;
+      if (middle === inside || middle === outside) break;
       if (f(root + sign * middle) === 0) inside = middle;
       else outside = middle;
     }
     return inside;
   };
-  return Math.min(most, (side(1) + side(-1)) / 2);
+  return Math.min(most, side(1) / 2 + side(-1) / 2);
 }
 
 /**
  * F, the distance from a root r of multiplicity m below which binary64 evaluation of this form of f cannot
  * tell x from r (absolute, in the unit of x):
  * F = max(ulp(r)/2, (m! η / |f⁽ᵐ⁾(r)|)^(1/m)), with η measured, since the form of f decides it.
+ *
+ * At r = 0 the ulps are subnormal and say nothing of rounding in f: there F is also at least half the width of
+ * the stretch on which binary64 f is exactly 0 (x − sin x is 0 below 1e-8 or so). Where f jumps at r there is
+ * no derivative, and F = ulp(r)/2.
  *
  * Flat roots (all derivatives 0): half the width on which binary64 f is exactly 0, at most 1e-2 of the
  * bracket, or 1e-2 max(1, |r|) without one; to be taken once where F is elsewhere taken 16 times.
@@ -128,15 +152,14 @@ export function attainableAccuracy(
 ): number {
   const { f } = compileDouble(problem.equation, binaryParameters(problem.parameters));
   const rounded = Number(root.value);
-  if (isFlatRoot(problem, root.value)) {
-    const span = bracket === null ? Math.max(1, Math.abs(rounded)) : bracket[1] - bracket[0];
-    return flatHalfWidth(f, rounded, flatShare * span);
-  }
+  const span = bracket === null ? Math.max(1, Math.abs(rounded)) : bracket[1] - bracket[0];
+  const zeroWidth = () => zeroHalfWidth(f, rounded, Math.min(flatShare * span, Number.MAX_VALUE));
+  if (isFlatRoot(problem, root.value)) return zeroWidth();
   const coefficient = leadingCoefficient(problem, root);
   if (coefficient === null) throw new RangeError(`f is undefined around ${root.value}`);
+  const least = Math.max(ulpOf(rounded) / 2, rounded === 0 ? zeroWidth() : 0);
+  if (coefficient.isZero() || jumps(problem, root.value)) return least;
   const error = evaluationError(problem, f, rounded);
-  const least = ulpOf(rounded) / 2;
-  if (coefficient.isZero()) return least;
   const Wide = Decimal.clone({ precision: 30, minE: -9e15, maxE: 9e15 });
   const distance = new Wide(error).div(coefficient).pow(new Wide(1).div(root.multiplicity)).toNumber();
   return Math.max(least, Number.isFinite(distance) ? distance : least);

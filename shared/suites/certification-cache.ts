@@ -3,10 +3,10 @@ import { attainableVersion } from '../equations/attainable.ts';
 import { certifierVersion } from '../equations/certify.ts';
 import { certifiedRoot } from '../schemas/case.ts';
 import { sha256 } from './sha256.ts';
-import type { PlainCase, StatedRoot } from './write-out.ts';
+import type { PlainCase } from './write-out.ts';
 
-/** What is kept of one root's certification: the result, not the way to it. Refusals are never kept. */
-export const keptCertificate = certifiedRoot.omit({ allowed: true });
+/** What is kept of a case all of whose claims were certified: its roots in order. Refusals are never kept. */
+export const keptCertificate = z.array(certifiedRoot);
 export type KeptCertificate = z.infer<typeof keptCertificate>;
 
 /** Where certifications are kept between readings, since certifying a suite takes seconds. */
@@ -22,21 +22,14 @@ export const certificatesFile = z.strictObject({
 });
 export type CertificatesFile = z.infer<typeof certificatesFile>;
 
-/** Changes with everything that decides a root's certificate or its attainable accuracy. */
-export function certificationKey(plain: PlainCase, root: StatedRoot): string {
+/** Changes with everything that decides whether the claims of a case hold, and with the certifier itself. */
+export function certificationKey(plain: PlainCase): string {
   const parameters = Object.entries(plain.parameters).sort(([a], [b]) => (a < b ? -1 : 1));
-  const { value, digits, multiplicity, simple, statement } = root;
-  // The bracket matters to F of flat roots alone, and costs nothing to include.
-  const content = [
-    plain.equation,
-    parameters,
-    plain.bracket,
-    value,
-    digits,
-    multiplicity,
-    simple,
-    statement !== null,
-  ];
+  const roots = plain.roots.map(({ value, digits, multiplicity, allowed, simple, statement }) => {
+    return [value, digits, multiplicity, allowed, simple, statement !== null];
+  });
+  const traits = [...plain.traits].sort();
+  const content = [plain.equation, parameters, plain.bracket, roots, plain.expectation, traits];
   return sha256(JSON.stringify([certifierVersion, attainableVersion, content]));
 }
 

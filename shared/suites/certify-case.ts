@@ -21,17 +21,13 @@ export interface CertifiedCase {
   problems: CaseProblem[];
 }
 
-/** Certifies one root with its attainable accuracy, or takes it from the cache. */
+/** Certifies one root and measures its attainable accuracy. */
 function certified(
   problem: Problem,
   plain: PlainCase,
   stated: StatedRoot,
-  cache: CertificationCache | null,
 ): CertifiedRoot | { reason: string } {
-  const key = cache === null ? '' : certificationKey(plain, stated);
-  const kept = cache?.get(key);
-  if (kept !== undefined) return { ...kept, allowed: stated.allowed };
-  const { value, digits, multiplicity, statement } = stated;
+  const { value, digits, multiplicity, statement, allowed } = stated;
   const names = Object.keys(plain.parameters);
   const simple = stated.simple === null ? null : parseEquation(stated.simple, names);
   const result = certifyRoot(problem, { value, digits, multiplicity, simple, statement });
@@ -39,15 +35,14 @@ function certified(
   const { certificate } = result;
   const bracket: [number, number] | null =
     plain.bracket === null ? null : [Number(plain.bracket[0]), Number(plain.bracket[1])];
-  const fresh = {
+  return {
     value: certificate.value,
     digits: certificate.digits,
     multiplicity,
+    allowed,
     certificate: certificate.certificate,
     attainable: attainableAccuracy(problem, { value: certificate.value, multiplicity }, bracket),
   };
-  cache?.set(key, fresh);
-  return { ...fresh, allowed: stated.allowed };
 }
 
 /** Whether a decimal lies in the bracket, ends included. */
@@ -127,9 +122,18 @@ function unexpectedRoot(problem: Problem, plain: PlainCase): string | null {
 /**
  * Certifies all that a case claims: its roots and their multiplicities, that allowed roots lie in the bracket,
  * the signs at the bracket's ends, traits that follow from these, and that a case without a root has none that
- * a change of sign finds.
+ * a change of sign finds. `cache`: asked first, and told what was certified.
  */
 export function certifyCase(plain: PlainCase, cache: CertificationCache | null): CertifiedCase {
+  const key = cache === null ? '' : certificationKey(plain);
+  const kept = cache?.get(key);
+  if (kept !== undefined) return { roots: kept, problems: [] };
+  const result = certifyAfresh(plain);
+  if (result.problems.length === 0) cache?.set(key, result.roots);
+  return result;
+}
+
+function certifyAfresh(plain: PlainCase): CertifiedCase {
   const equation = parseEquation(plain.equation, Object.keys(plain.parameters));
   const problem = problemOf(equation, plain.parameters);
   const problems: CaseProblem[] = [];
@@ -138,7 +142,7 @@ export function certifyCase(plain: PlainCase, cache: CertificationCache | null):
   };
   const roots: CertifiedRoot[] = [];
   plain.roots.forEach((stated, index) => {
-    const result = certified(problem, plain, stated, cache);
+    const result = certified(problem, plain, stated);
     if ('reason' in result) refuse(['roots', index, 'value'], result.reason);
     else roots.push(result);
     if (stated.allowed && plain.bracket !== null && !isInside(stated.value, plain.bracket)) {
