@@ -8,10 +8,10 @@ export function illinois(f, a, b, tolerance, most, step) {
   let fb = f(b);
   if (small(fb, tolerance)) return root(b, 0);
   if (!(Math.sign(fa) * Math.sign(fb) < 0)) return failed('no change of sign', 0);
-  let old = a;
   let stayed = 0;
   for (let k = 1; k <= most; k += 1) {
-    const c = cut(a, fa, b, fb);
+    let c = cut(a, fa, b, fb);
+    if (c === a || c === b) c = a + (b - a) / 2;
     if (!Number.isFinite(c)) return failed('left the real line', k - 1);
     const fc = f(c);
     if (Number.isNaN(fc)) return failed('f is not defined there', k);
@@ -27,8 +27,7 @@ export function illinois(f, a, b, tolerance, most, step) {
       stayed = 1;
     }
     step(c, Math.min(a, b), Math.max(a, b));
-    if (small(fc, tolerance) || near(a, b, tolerance) || c === old) return root(c, k);
-    old = c;
+    if (small(fc, tolerance) || near(a, b, tolerance)) return root(c, k);
   }
   return failed('too many steps', most);
 }
