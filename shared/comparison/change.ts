@@ -78,7 +78,9 @@ export function changesOf(pair: MatchedPair, limits: ChangeLimits, isExact: bool
   if ((isExact && hasDrifted) || hasOtherOutcome) found.add('drifted');
   if (found.size === 0) found.add('same');
 
-  const [change = 'same', ...others] = gravity.filter((one) => found.has(one));
+  // Most pairs have one change alone; then there is nothing to put in order.
+  const ordered = found.size === 1 ? [...found] : gravity.filter((one) => found.has(one));
+  const [change = 'same', ...others] = ordered;
   const digits =
     bothSolved && reference.digits !== null && candidate.digits !== null
       ? candidate.digits - reference.digits

@@ -43,6 +43,8 @@ interface Finding {
   pairs: Pair[];
   first: Pair;
   where: RichText;
+  /** The same in a list of several solvers. */
+  briefly: RichText;
 }
 
 /** Pairs with a change, be it their gravest or not, by solver; from four solvers on one statement for all. */
@@ -54,9 +56,9 @@ function perSolver(
 ): Clause[] {
   const findings = findingsOf(comparison, change);
   if (findings.length <= mostNames) return findings.map((one) => ({ text: clause(one), isLong: false }));
-  const shown = findings.slice(0, mostNames).map(({ solver, where }) => say`${solver} on ${where}`);
+  const shown = findings.slice(0, mostNames).map(({ solver, briefly }) => say`${solver} on ${briefly}`);
   const rest = findings.length - mostNames;
-  const text = say`${findings.length} solvers ${plural}: ${list([...shown, say`${rest} more`])}`;
+  const text = say`${findings.length} solvers ${plural}: ${list([...shown, say`${rest} others`])}`;
   return [{ text, isLong: true }];
 }
 
@@ -85,7 +87,8 @@ function findingsOf(comparison: Comparison, change: Change): Finding[] {
     });
     const where =
       names.length <= mostNames ? list(names) : say`${names.length} cases, among them ${names[0] ?? []}`;
-    return [{ solver: name(totals.solver), totals, pairs, first, where }];
+    const briefly = names.length === 1 ? where : say`${names.length} cases`;
+    return [{ solver: name(totals.solver), totals, pairs, first, where, briefly }];
   });
 }
 
@@ -122,19 +125,21 @@ function orderGained({ solver, first, where, pairs }: Finding): RichText {
 function orders(first: Pair, pairs: readonly Pair[]): RichText {
   const [from, to] = [first.reference?.order.value ?? null, first.candidate?.order.value ?? null];
   if (from === null || to === null) return say`not known`;
-  return pairs.length === 1 ? fromTo(from, to, 2) : say`${fromTo(from, to, 2)} on ${name(first.case)}`;
+  // One case, or many of which the first has just been named.
+  const isClear = pairs.length === 1 || pairs.length > mostNames;
+  return isClear ? fromTo(from, to, 2) : say`${fromTo(from, to, 2)} on ${name(first.case)}`;
 }
 
-function lessAccurate({ solver, first, where, pairs }: Finding): RichText {
-  const digits = fixed(-(first.digits ?? 0), 1);
-  if (pairs.length === 1) return say`${solver} ends with ${digits} digits fewer on ${where}`;
-  return say`${solver} is less accurate on ${where}, by ${digits} digits on ${name(first.case)}`;
+function lessAccurate({ solver, where, pairs }: Finding): RichText {
+  const most = fixed(Math.max(...pairs.map((pair) => -(pair.digits ?? 0))), 1);
+  if (pairs.length === 1) return say`${solver} ends with ${most} digits fewer on ${where}`;
+  return say`${solver} ends with up to ${most} digits fewer on ${where}`;
 }
 
-function moreAccurate({ solver, first, where, pairs }: Finding): RichText {
-  const digits = fixed(first.digits ?? 0, 1);
-  if (pairs.length === 1) return say`${solver} ends with ${digits} digits more on ${where}`;
-  return say`${solver} is more accurate on ${where}, by ${digits} digits on ${name(first.case)}`;
+function moreAccurate({ solver, where, pairs }: Finding): RichText {
+  const most = fixed(Math.max(...pairs.map((pair) => pair.digits ?? 0)), 1);
+  if (pairs.length === 1) return say`${solver} ends with ${most} digits more on ${where}`;
+  return say`${solver} ends with up to ${most} digits more on ${where}`;
 }
 
 function unsteady({ solver, where }: Finding): RichText {
@@ -145,7 +150,7 @@ function mended({ solver, where, pairs }: Finding): RichText {
   const isRefusal = pairs.every((pair) => pair.candidate?.outcome === 'refused');
   return isRefusal
     ? say`${solver} now rightly refuses ${where}`
-    : say`${solver} now solves ${where}, which it did not before`;
+    : say`${solver} now solves ${where}, where the reference does not`;
 }
 
 function cheaper({ solver, totals, pairs, where }: Finding): RichText {
@@ -198,9 +203,10 @@ function costlierTogether(findings: readonly Finding[]): Clause {
   });
   const rest = findings.length - mostNames;
   const repeating = findings.filter((one) => repeatedCause(one.totals) !== null).length;
-  const cause = repeating === 0 ? [] : say`; ${repeating} of them ask again at an x they already have`;
+  const who = repeating === findings.length ? say`all` : say`${repeating}`;
+  const cause = repeating === 0 ? [] : say`; ${who} of them ask again at an x they already have`;
   return {
-    text: say`${findings.length} solvers need more evaluations: ${list([...shown, say`${rest} more`])}${cause}`,
+    text: say`${findings.length} solvers need more evaluations: ${list([...shown, say`${rest} others`])}${cause}`,
     isLong: true,
   };
 }

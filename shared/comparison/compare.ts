@@ -90,13 +90,14 @@ function inOrder(
   const solvers = places([...candidate.solvers, ...reference.solvers].map((one) => one.name));
   const cases = places([...candidate.cases, ...reference.cases].map((one) => one.id));
   const last = Number.MAX_SAFE_INTEGER;
-  return pairs.toSorted((a, b) => {
-    return (
-      (solvers.get(a.solver) ?? last) - (solvers.get(b.solver) ?? last) ||
-      (cases.get(a.case.id) ?? last) - (cases.get(b.case.id) ?? last) ||
-      (a.start ?? -1) - (b.start ?? -1)
-    );
-  });
+  const ranked = pairs.map((pair) => ({
+    pair,
+    solver: solvers.get(pair.solver) ?? last,
+    case: cases.get(pair.case.id) ?? last,
+    start: pair.start ?? -1,
+  }));
+  ranked.sort((a, b) => a.solver - b.solver || a.case - b.case || a.start - b.start);
+  return ranked.map(({ pair }) => pair);
 }
 
 function reasonsOf(

@@ -9,9 +9,8 @@ export function describePair(pair: Pair, asks: 'f' | 'more' = 'f'): RichText {
   if (reference === null || candidate === null) return describeSingle(pair);
   switch (change) {
     case 'broke':
-      return say`${ended(reference, 'the reference')}; ${ended(candidate, 'the candidate')}.`;
     case 'mended':
-      return say`${ended(reference, 'the reference')}; ${ended(candidate, 'the candidate')}.`;
+      return say`${ended(reference, 'The reference')}; ${ended(candidate, 'the candidate')}.`;
     case 'root moved':
       return say`Both solve it, at different roots: the candidate ends at ${root(candidate)}, the reference at ${root(reference)}.`;
     case 'order lost':
@@ -77,7 +76,10 @@ function describeDrifted(reference: SolveRecord, candidate: SolveRecord): RichTe
 }
 
 /** `the candidate refused after 102 evaluations: “too many steps”`; without a subject, `refused after …`. */
-function ended(solve: SolveRecord, who: 'the reference' | 'the candidate' | null): RichText {
+function ended(
+  solve: SolveRecord,
+  who: 'The reference' | 'the reference' | 'the candidate' | null,
+): RichText {
   const subject = who === null ? '' : `${who} `;
   const after = evaluations(solve);
   switch (solve.outcome) {

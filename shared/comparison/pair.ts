@@ -38,7 +38,7 @@ export function matchSolves(reference: ComparableRun, candidate: ComparableRun):
   const before = new Map(reference.solvers.map((one) => [one.name, one]));
   const now = new Map(candidate.solvers.map((one) => [one.name, one]));
   const solvesBefore = new Map(reference.solves.map((solve) => [solveKey(solve), solve]));
-  const seen = new Set<string>();
+  const seen = new Set<SolveRecord>();
   const result: Matching = { pairs: [], notApplicable: [], notCompared: [] };
 
   const put = (pair: MatchedPair) => {
@@ -49,9 +49,9 @@ export function matchSolves(reference: ComparableRun, candidate: ComparableRun):
 
   for (const solve of candidate.solves) {
     const former = names.before.get(solve.solver) ?? solve.solver;
-    const key = solveKey({ ...solve, solver: former });
+    const key = solveKey({ solver: former, case: solve.case, start: solve.start });
     const match = names.before.has(solve.solver) ? (solvesBefore.get(key) ?? null) : null;
-    if (match !== null) seen.add(key);
+    if (match !== null) seen.add(match);
     const { solver, start } = solve;
     const theCase = casesNow.get(solve.case) ?? bareCase(solve.case);
     if (match !== null && hasChanged(casesBefore.get(solve.case), casesNow.get(solve.case))) {
@@ -64,7 +64,7 @@ export function matchSolves(reference: ComparableRun, candidate: ComparableRun):
   }
 
   for (const solve of reference.solves) {
-    if (seen.has(solveKey(solve))) continue;
+    if (seen.has(solve)) continue;
     const later = names.now.get(solve.solver);
     const [was, is] = [before.get(solve.solver), later === undefined ? undefined : now.get(later)];
     const [caseBefore, caseNow] = [casesBefore.get(solve.case), casesNow.get(solve.case)];
@@ -121,7 +121,9 @@ export function matchNames(
 
 /** The family of a case: as given, else its id up to the first slash. */
 export function familyOf({ id, family }: ComparableCase): string {
-  return family ?? id.split('/', 1)[0] ?? id;
+  if (family !== undefined) return family;
+  const slash = id.indexOf('/');
+  return slash < 0 ? id : id.slice(0, slash);
 }
 
 function applicable(solve: SolveRecord | null): SolveRecord | null {

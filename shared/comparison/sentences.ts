@@ -22,9 +22,7 @@ export function describeComparison(comparison: Comparison): ComparisonText {
   const good = goodClauses(comparison);
   const { verdict, rest } = headOf(comparison, bad, good);
   const lead = [
-    ...comparison.reasons
-      .filter((reason) => !plainText(verdict).includes(reason.slice(0, -1)))
-      .map((text) => [{ text }]),
+    ...reasonsFor(comparison),
     ...rest.map(({ text }) => say`${text}.`),
     ...inReturn(bad.length > 0, good),
     ...repeatsToo(comparison),
@@ -39,6 +37,15 @@ export function describeFailure(reason: string): ComparisonText {
   const verdict = say`Nothing was compared, and the reference stays as it is.`;
   const lead = [[{ text: reason }]];
   return { verdict, lead, plain: plainText(paragraph([verdict, ...lead])) };
+}
+
+/** The reasons that the verdict sentence has not given. */
+function reasonsFor(comparison: Comparison): RichText[] {
+  if (comparedCount(comparison) === 0) return comparison.reasons.slice(0, -1).map((text) => [{ text }]);
+  const isSaid = (reason: string) => {
+    return comparison.verdict === 'could not tell' && reason.startsWith('The candidate has no result');
+  };
+  return comparison.reasons.filter((reason) => !isSaid(reason)).map((text) => [{ text }]);
 }
 
 function headOf(
@@ -80,13 +87,15 @@ function openVerdict(comparison: Comparison): RichText {
 function quietVerdict(comparison: Comparison, compared: number): RichText {
   const drifted = comparison.changes.drifted ?? 0;
   if (drifted > 0) return driftedVerdict(comparison, drifted, compared);
+  const isWhole = comparison.pairs.length === compared && comparison.notCompared.length === 0;
   const solves = compared === 1 ? say`the one solve` : say`all ${compared} solves`;
+  const which = isWhole ? solves : say`${solves} that could be compared`;
   if (!comparison.exact) {
-    return say`Outcome and cost are the same in ${solves}; different arithmetic does not let them be compared to the last bit.`;
+    return say`Outcome and cost are the same in ${which}; different arithmetic does not let them be compared to the last bit.`;
   }
   return compared === 1
-    ? say`Nothing changed: the one solve is the same to the last bit.`
-    : say`Nothing changed: ${solves} are the same to the last bit.`;
+    ? say`Nothing changed: ${which} is the same to the last bit.`
+    : say`Nothing changed: ${which} are the same to the last bit.`;
 }
 
 function driftedVerdict({ totals, overall, pairs }: Comparison, drifted: number, compared: number): RichText {
@@ -101,7 +110,12 @@ function driftedVerdict({ totals, overall, pairs }: Comparison, drifted: number,
   const rest = drifted === compared ? say`` : say`; everything else is the same to the last bit`;
   if (own.length === 1 && only !== undefined) {
     const of = only.candidate.of;
-    const where = of === 1 ? say`its one solve` : say`${drifted} of its ${of} solves`;
+    const where =
+      of === 1
+        ? say`its one solve`
+        : drifted === of
+          ? say`all its ${of} solves`
+          : say`${drifted} of its ${of} solves`;
     return say`${name(only.solver)} takes another path in ${where}${cost}${rest}.`;
   }
   return say`${own.length} solvers take another path in ${drifted} of ${compared} solves${cost}${rest}.`;
@@ -119,7 +133,8 @@ function repeatsToo({ totals, pairs }: Comparison): RichText[] {
     const { reference, candidate } = one.findings.repeated;
     const isNamed = costlier.has(one.solver) && repeatedCause(one) !== null;
     if (candidate.solves * 2 <= candidate.of || isNamed || one.presence === 'gone') return [];
-    const where = candidate.of === 1 ? say`` : say` in ${candidate.solves} of its ${candidate.of} solves`;
+    const count = candidate.solves === candidate.of ? say`all` : say`${candidate.solves} of`;
+    const where = candidate.of === 1 ? say`` : say` in ${count} its ${candidate.of} solves`;
     return [
       say`${name(one.solver)} ${askedAgain(one.uses)}${where}${beside(one.presence, reference, candidate)}.`,
     ];
@@ -144,8 +159,9 @@ function unchangedSolvers({ totals, exact, changes }: Comparison): RichText[] {
     Object.keys(one.changes).every((word) => words.includes(word));
   const same = compared.filter((one) => only(one, ['same']));
   const drifted = compared.filter((one) => only(one, ['same', 'drifted']) && !same.includes(one));
-  const total = Object.values(changes).reduce((sum, count) => sum + count, 0);
-  if (total === (changes.same ?? 0) + (changes.drifted ?? 0)) return [];
+  // The verdict sentence has said it then.
+  const loud = Object.keys(changes).filter((word) => !['same', 'drifted', 'new', 'gone'].includes(word));
+  if (loud.length === 0) return [];
   const sentences: RichText[] = [];
   if (same.length > 0 && exact) {
     const names = list(same.map((one) => name(one.solver)));
@@ -167,7 +183,9 @@ function unchangedSolvers({ totals, exact, changes }: Comparison): RichText[] {
 }
 
 /** New and gone solvers and cases, and renamed ones. */
-function comingAndGoing({ totals, pairs }: Comparison): RichText[] {
+function comingAndGoing(comparison: Comparison): RichText[] {
+  const { totals, pairs } = comparison;
+  if (comparedCount(comparison) === 0) return [];
   const sentences: RichText[] = [];
   const fresh = totals.filter((one) => one.presence === 'new');
   const gone = totals.filter((one) => one.presence === 'gone');

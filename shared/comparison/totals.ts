@@ -98,11 +98,11 @@ function sumCost(costs: readonly CostPair[]): CostPair {
 function meanCost(costs: readonly CostPair[]): CostPair {
   const total = sumCost(costs);
   const count = Math.max(1, costs.length);
-  const percents = costs.flatMap((cost) => cost.percent ?? []);
-  const percent =
-    percents.length === 0 || percents.length < costs.length
-      ? null
-      : percents.reduce((sum, value) => sum + value, 0) / percents.length;
+  let percents: number | null = costs.length === 0 ? null : 0;
+  for (const cost of costs) {
+    percents = percents === null || cost.percent === null ? null : percents + cost.percent;
+  }
+  const percent = percents === null ? null : percents / count;
   return { reference: total.reference / count, candidate: total.candidate / count, percent };
 }
 
@@ -112,12 +112,12 @@ function solvedCount(solves: readonly SolveRecord[]): SolvedCount {
 
 function findingsOf(was: readonly SolveRecord[], is: readonly SolveRecord[]): SolverTotals['findings'] {
   const count = (solves: readonly SolveRecord[], finding: QueryFinding): FindingCount => {
-    const found = solves.map((solve) => solve.queryCheck[finding]);
-    return {
-      solves: found.filter((times) => times > 0).length,
-      of: solves.length,
-      evaluations: found.reduce((sum, times) => sum + times, 0),
-    };
+    let [withSome, evaluations] = [0, 0];
+    for (const { queryCheck } of solves) {
+      evaluations += queryCheck[finding];
+      if (queryCheck[finding] > 0) withSome += 1;
+    }
+    return { solves: withSome, of: solves.length, evaluations };
   };
   const both = (finding: QueryFinding) => ({ reference: count(was, finding), candidate: count(is, finding) });
   return {
@@ -130,12 +130,18 @@ function findingsOf(was: readonly SolveRecord[], is: readonly SolveRecord[]): So
 }
 
 function orderSummary(solves: readonly SolveRecord[]): OrderSummary {
-  const values = solves.flatMap(({ order }) => (isOrderKnown(order) ? order.value : []));
+  const values: number[] = [];
+  for (const { order } of solves) if (isOrderKnown(order)) values.push(order.value);
   return { median: values.length === 0 ? null : median(values), count: values.length };
 }
 
 function solvesOf(pairs: readonly Pair[], side: 'reference' | 'candidate'): SolveRecord[] {
-  return pairs.flatMap((pair) => pair[side] ?? []);
+  const solves: SolveRecord[] = [];
+  for (const pair of pairs) {
+    const solve = pair[side];
+    if (solve !== null) solves.push(solve);
+  }
+  return solves;
 }
 
 function groups<T>(items: readonly T[], keyOf: (item: T) => string): Map<string, T[]> {
