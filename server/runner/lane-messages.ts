@@ -40,6 +40,8 @@ export interface LaneJob {
   limits: LaneLimits;
   isFresh: boolean;
   wantsStarts: boolean;
+  /** Wrong solves of one solver in a row after which this lane alone may leave its others; or Infinity. */
+  streakLimit: number;
   replies: MessagePort;
 }
 

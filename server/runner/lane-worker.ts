@@ -6,6 +6,7 @@ import type { DoneSolve, EndHow, FromWorker, LaneJob, ToWorker } from './lane-me
 import { LaneState, WorkQueue } from './lane-state.ts';
 import { PathRecorder } from './path-recorder.ts';
 import { CaseTools, recordSolve } from './record-solve.ts';
+import { WRONG_OUTCOMES } from './solve-order.ts';
 import { findNoise, type RawSolve, SolveSession } from './solve-session.ts';
 import { CLOSE_LINE, OPEN_LINE, WIRE_VERSION } from './wire.ts';
 
@@ -25,6 +26,8 @@ class LaneRunner {
   readonly #tools: CaseTools;
   #link: AdapterLink | null = null;
   #outbox: DoneSolve[] = [];
+  /** By solver: wrong solves in a row on this lane. */
+  readonly #streaks: number[] = [];
   #sentAtMs = 0;
 
   constructor(job: LaneJob, send: (message: FromWorker) => void) {
@@ -40,7 +43,7 @@ class LaneRunner {
     for (let at = this.#queue.take(); at < this.#job.work.length; at = this.#queue.take()) {
       if (this.#state.isStopping()) break;
       const solver = this.#job.work[at]?.planned.solver ?? 0;
-      if (this.#queue.isGivenUp(solver)) continue;
+      if (this.#queue.isGivenUp(solver) || (this.#streaks[solver] ?? 0) >= this.#job.streakLimit) continue;
       this.#solve(at);
       if (this.#job.isFresh) this.#close();
       this.#flush(this.#outbox.length >= BATCH_SOLVES);
@@ -118,6 +121,8 @@ class LaneRunner {
       limits: this.#job.limits,
     });
     this.#outbox.push({ at, record, path });
+    const isWrong = WRONG_OUTCOMES.includes(record.outcome);
+    this.#streaks[planned.solver] = isWrong ? (this.#streaks[planned.solver] ?? 0) + 1 : 0;
   }
 
   /** The solve that had ended keeps its result, with a remark. */
@@ -182,10 +187,26 @@ class LaneRunner {
   #close(): void {
     const link = this.#link;
     if (!link) return;
-    const what = link.endedSolves > 0 && !this.#state.isStopping() ? findNoise(link) : null;
-    if (what !== null) this.#spoilLast(what);
-    const isOpen = what === null && link.write(CLOSE_LINE);
-    this.#end(isOpen ? 'close' : 'kill');
+    if (this.#state.isStopping()) {
+      this.#end('kill');
+      return;
+    }
+    const noise = link.endedSolves > 0 ? findNoise(link) : null;
+    const what = noise ?? this.#sayClose(link);
+    if (what !== null && link.endedSolves > 0) this.#spoilLast(what);
+    this.#end(noise === null ? 'close' : 'kill');
+  }
+
+  /** Writes `close` and reads to the end; what the adapter had done wrong before it read that, or null. */
+  #sayClose(link: AdapterLink): string | null {
+    let what: string | null = null;
+    this.#state.arm(this.#job.limits.closeMs);
+    link.write(CLOSE_LINE);
+    for (let event = link.next(); event && !this.#state.isExpired(); event = link.next()) {
+      if (event.kind !== 'comment') what ??= `it wrote "${link.lastLine()}"`;
+    }
+    const wasInTime = this.#state.disarm();
+    return what ?? (wasInTime && link.hasLeftUnread(CLOSE_LINE) ? 'it ended' : null);
   }
 
   #end(how: EndHow): string {

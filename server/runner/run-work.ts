@@ -11,7 +11,7 @@ import { WorkQueue } from './lane-state.ts';
 import { LogTail } from './log-tail.ts';
 import { columnsToPath } from './path-recorder.ts';
 import { recordWithoutRun } from './record-solve.ts';
-import { type Released, SolveOrder } from './solve-order.ts';
+import { type Released, SolveOrder, STREAK_LIMIT } from './solve-order.ts';
 
 const LOG_LIMIT_BYTES = 64 * 1024;
 
@@ -144,6 +144,9 @@ class Run {
       limits: this.#limits,
       isFresh: fresh,
       wantsStarts: this.#hooks.onStart !== undefined,
+      // Several lanes see only their own part of a row, so there the main thread alone decides.
+      streakLimit:
+        this.#hooks.hasStreaks && this.#lanes.length === 1 ? STREAK_LIMIT : Number.POSITIVE_INFINITY,
     };
     // One lane that fails takes the others with it, but not before all have let go of their adapters.
     const runs = this.#lanes.map((lane) =>

@@ -3,7 +3,7 @@ import type { DoneSolve } from './lane-messages.ts';
 
 /** Solves in a row of one solver that went wrong, after which its others are not tried. */
 export const STREAK_LIMIT = 10;
-const WRONG: readonly Outcome[] = ['crashed', 'timed out', 'garbled'];
+export const WRONG_OUTCOMES: readonly Outcome[] = ['crashed', 'timed out', 'garbled'];
 
 /** What is to be recorded of one place in the work: the solve done, or that it was given up, and how the tenth ended. */
 export type Released = { at: number; done: DoneSolve } | { at: number; done: null; outcome: Outcome };
@@ -45,7 +45,7 @@ export class SolveOrder {
       this.#next[solver] = (this.#next[solver] ?? 0) + 1;
       released.push({ at, done: next });
       const { outcome } = next.record;
-      this.#streak[solver] = WRONG.includes(outcome) ? (this.#streak[solver] ?? 0) + 1 : 0;
+      this.#streak[solver] = WRONG_OUTCOMES.includes(outcome) ? (this.#streak[solver] ?? 0) + 1 : 0;
       if ((this.#streak[solver] ?? 0) < STREAK_LIMIT) continue;
       this.#isGivenUp[solver] = true;
       onGivenUp(solver);
