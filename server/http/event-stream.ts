@@ -53,9 +53,11 @@ export function sendEvents(response: Response, options: EventStreamOptions): voi
   const unsubscribe = bus.subscribe((event) => {
     if (filter(event)) offer(event);
   });
+  const forget = bus.onClose(() => response.end());
   const keepAlive = setInterval(() => response.write(': still here\n\n'), keepAliveMs);
   response.on('close', () => {
     unsubscribe();
+    forget();
     clearInterval(keepAlive);
     for (const timer of timers.values()) clearTimeout(timer);
     timers.clear();

@@ -12,7 +12,9 @@ export function staticSite(folder: string): RequestHandler[] {
   });
   /** Pages are made in the browser, so every other address that asks for a page gets the same one. */
   const page: RequestHandler = (request, response, next) => {
-    if ((request.method !== 'GET' && request.method !== 'HEAD') || !request.accepts('html')) next();
+    const isReading = request.method === 'GET' || request.method === 'HEAD';
+    const isFile = request.path.startsWith('/assets/');
+    if (!isReading || isFile || !request.accepts('html')) next();
     else response.set('Cache-Control', 'no-cache').sendFile(path.join(folder, 'index.html'), next);
   };
   return [files, page];

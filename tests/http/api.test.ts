@@ -28,9 +28,9 @@ describe('POST /api/libraries', () => {
   it('creates a library that can be read at its location', async () => {
     const { app } = openTestApp();
     const created = await request(app).post('/api/libraries').send(newLibrary).expect(201);
-    expect(created.headers['location']).toBe('/api/libraries/pocket-roots');
+    expect(created.headers.location).toBe('/api/libraries/pocket-roots');
     const read = await request(app)
-      .get(created.headers['location'] ?? '')
+      .get(created.headers.location ?? '')
       .expect(200);
     expect(libraryView.parse(read.body)).toEqual(libraryView.parse(created.body));
     expect(read.body).toMatchObject({ ...newLibrary, solverCount: 0, buildCount: 0, runCount: 0 });
@@ -168,7 +168,7 @@ describe('GET /api/suites', () => {
       'pole',
       'wave',
     ]);
-    const tag = first.headers['etag'] ?? '';
+    const tag = first.headers.etag ?? '';
     const again = await request(app.app)
       .get('/api/suites/tests/revisions/1')
       .set('If-None-Match', tag)
@@ -321,7 +321,7 @@ describe('/api/libraries/:library/references', () => {
     const one = await request(app.app).get(`/api/references/${revision.id}`).expect(200);
     await request(app.app)
       .get(`/api/references/${revision.id}`)
-      .set('If-None-Match', one.headers['etag'] ?? '')
+      .set('If-None-Match', one.headers.etag ?? '')
       .expect(304);
   });
 

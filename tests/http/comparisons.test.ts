@@ -3,8 +3,8 @@ import { describe, expect, it } from 'vitest';
 import { comparisonView, pairPage } from '../../shared/schemas/comparisons.ts';
 import { problem } from '../../shared/schemas/problem.ts';
 import type { SolveRecord } from '../../shared/schemas/solve.ts';
-import { createFakeMeasuring } from '../helpers/app-fake-measuring.ts';
 import { makeBuildFolder, openTestApp, seedLibrary } from '../helpers/app.ts';
+import { createFakeMeasuring } from '../helpers/app-fake-measuring.ts';
 import { buildRevision, buildSolver } from '../helpers/builders.ts';
 
 const actor = { name: 'local' };
@@ -15,7 +15,14 @@ function shape(record: SolveRecord, salt: string): Partial<SolveRecord> {
   if (record.case === 'cubic')
     return { evaluations: record.evaluations + 9, f: record.f + 9, pathHash: 'cd'.repeat(32) };
   if (record.case === 'pole')
-    return { outcome: 'refused', root: null, error: null, digits: null, ulps: null, pathHash: 'ef'.repeat(32) };
+    return {
+      outcome: 'refused',
+      root: null,
+      error: null,
+      digits: null,
+      ulps: null,
+      pathHash: 'ef'.repeat(32),
+    };
   return {};
 }
 
@@ -48,13 +55,23 @@ describe('GET /api/comparisons', () => {
     expect(byRun.candidate).toMatchObject({ run: after.id, build: { label: 'changed' }, solves: 6 });
     const byReference = await get({ revision: reference.id });
     expect({ ...byReference, reference: null }).toEqual({ ...byRun, reference: null });
-    expect(byReference.reference).toMatchObject({ revision: reference.id, run: before.id, label: 'reference 1' });
+    expect(byReference.reference).toMatchObject({
+      revision: reference.id,
+      run: before.id,
+      label: 'reference 1',
+    });
   });
 
   it('judges by the allowances of a given number, or by those that hold now', async () => {
     const { app, after, reference } = await twoRuns();
     const { allowances } = app.services;
-    const lenient = { broke: null, caseEvaluations: null, totalPercent: null, digits: null, orderUnder: null };
+    const lenient = {
+      broke: null,
+      caseEvaluations: null,
+      totalPercent: null,
+      digits: null,
+      orderUnder: null,
+    };
     allowances.set(actor, 'pocket-roots', {
       allowances: {
         base: { ...allowances.get('pocket-roots').allowances.base, ...lenient },
@@ -67,7 +84,9 @@ describe('GET /api/comparisons', () => {
     const query = { candidate: after.id, revision: reference.id };
     const now = await request(app.app).get('/api/comparisons').query(query).expect(200);
     expect(comparisonView.parse(now.body)).toMatchObject({ verdict: 'within allowances', allowances: 1 });
-    const then = await request(app.app).get('/api/comparisons').query({ ...query, allowances: 0 });
+    const then = await request(app.app)
+      .get('/api/comparisons')
+      .query({ ...query, allowances: 0 });
     expect(comparisonView.parse(then.body)).toMatchObject({ verdict: 'beyond allowances', allowances: 0 });
   });
 
@@ -134,7 +153,9 @@ describe('GET /api/comparisons/pairs', () => {
     };
     expect((await get({ change: ['broke', 'costlier'] })).items).toHaveLength(2);
     expect((await get({ solver: 'bisection', case: 'wave' })).items).toHaveLength(1);
-    expect((await get({ trait: 'pole', text: 'SECANT' })).items.map((pair) => pair.change)).toEqual(['broke']);
+    expect((await get({ trait: 'pole', text: 'SECANT' })).items.map((pair) => pair.change)).toEqual([
+      'broke',
+    ]);
     const first = await get({ limit: 4, sort: 'suite' });
     const second = await get({ limit: 4, sort: 'suite', cursor: first.next ?? '' });
     expect([...first.items, ...second.items].map((pair) => pair.key)).toEqual(

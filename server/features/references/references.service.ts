@@ -20,7 +20,14 @@ import type { RunSolves } from '../runs/run-solves.ts';
 import type { RunRow, RunsRepo } from '../runs/runs.repo.ts';
 import type { SuitesService } from '../suites/suites.service.ts';
 import { presentEntry, presentReference } from './references.present.ts';
-import type { ChainRow, EntryRow, NamedReference, NewEntry, ReferenceRevisionRow, ReferencesRepo } from './references.repo.ts';
+import type {
+  ChainRow,
+  EntryRow,
+  NamedReference,
+  NewEntry,
+  ReferenceRevisionRow,
+  ReferencesRepo,
+} from './references.repo.ts';
 
 /** Reference results are kept apart by platform: other arithmetic, other paths. */
 export function platformOf(environment: Pick<Environment, 'platform' | 'arch'>): string {
