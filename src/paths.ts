@@ -8,7 +8,13 @@ export const paths = {
   library: (slug: string) => `/libraries/${part(slug)}`,
   build: (id: number) => `/builds/${id}`,
   run: (id: number) => `/runs/${id}`,
-  solve: (id: number) => `/solves/${id}`,
+  solve: (id: number, view: { against?: number | undefined; back?: string | undefined } = {}) => {
+    const search = new URLSearchParams();
+    if (view.against !== undefined) search.set('against', String(view.against));
+    if (view.back !== undefined) search.set('back', view.back);
+    const text = search.toString();
+    return text === '' ? `/solves/${id}` : `/solves/${id}?${text}`;
+  },
   comparison: (candidate: number, against?: string) =>
     against === undefined
       ? `/runs/${candidate}/comparison`

@@ -1,9 +1,25 @@
 import { createBrowserRouter, Navigate, type RouteObject } from 'react-router';
-import { Shell } from './components/sheet/shell.tsx';
 import { paths } from './paths.ts';
+import { ShellRoute } from './routes/shell-route.tsx';
 
 /** Pages are read when they are first opened; only the shell is in the first script. */
-const pages: RouteObject[] = [{ index: true, element: <Navigate to={paths.libraries()} replace /> }];
+const pages: RouteObject[] = [
+  { index: true, element: <Navigate to={paths.libraries()} replace /> },
+  {
+    path: 'runs/:run',
+    lazy: async () => ({ Component: (await import('./routes/run/run-page.tsx')).RunPage }),
+  },
+  {
+    path: 'runs/:run/comparison',
+    lazy: async () => ({
+      Component: (await import('./routes/comparison/comparison-page.tsx')).ComparisonPage,
+    }),
+  },
+  {
+    path: 'solves/:solve',
+    lazy: async () => ({ Component: (await import('./routes/solve/solve-page.tsx')).SolvePage }),
+  },
+];
 
 if (import.meta.env.DEV) {
   pages.push({
@@ -13,5 +29,7 @@ if (import.meta.env.DEV) {
 }
 
 export function createRouter() {
-  return createBrowserRouter([{ path: '/', element: <Shell />, children: pages }]);
+  return createBrowserRouter([
+    { path: '/', element: <ShellRoute />, HydrateFallback: () => null, children: pages },
+  ]);
 }

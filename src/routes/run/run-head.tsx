@@ -42,6 +42,9 @@ export function RunHead({ run, solves, cases }: RunHeadProps) {
     r: () => {
       if (!isLive) runAgain();
     },
+    c: () => {
+      if (!isLive && run.against !== null) void navigate(paths.comparison(run.id));
+    },
   });
   const hasFailed = run.status === 'failed' || run.status === 'stopped';
   const problem = cancel.error ?? again.error;

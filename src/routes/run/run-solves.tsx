@@ -127,7 +127,7 @@ export function RunSolves({ run, solves, cases }: RunSolvesProps) {
                 view.set({ sort: by, direction: sort.by === by && sort.direction === 'up' ? 'down' : 'up' })
               }
               caseHref={(caseId) => paths.suiteCase(run.suite.slug, caseId, run.suite.revision)}
-              solveHref={paths.solve}
+              solveHref={(solve) => paths.solve(solve)}
               isRunning={run.status === 'running' || run.status === 'queued'}
             />
           )}

@@ -1,8 +1,6 @@
 import { useMemo } from 'react';
-import { Link, useNavigate } from 'react-router';
-import { changesOf } from '../../../shared/comparison/change.ts';
+import { useNavigate } from 'react-router';
 import { isRightlyRefused } from '../../../shared/numerics/judge-claim.ts';
-import { defaultAllowances } from '../../../shared/schemas/allowances.ts';
 import type { SuiteCase } from '../../../shared/schemas/case.ts';
 import type { RunDetail, SolveDetail } from '../../../shared/schemas/runs.ts';
 import { LargeStrip, type LargeStripRow } from '../../components/digit-strip/large-strip.tsx';
@@ -80,7 +78,12 @@ export function SolveSheet({ solve, reference, run, suiteCase, backTo }: SolveSh
   const said = solve.remarks.filter((remark) => !['rightly refused', 'path cut'].includes(remark.code));
   const hasRoots = suiteCase.roots.length > 0;
   const name = `${solve.solver} on ${solve.case}`;
-  const command = `npm run tallyroot -- trace ${solve.solver} ${solve.case} --run ${solve.run}${solve.start === null || suiteCase.starts.length < 2 ? '' : ` --start ${solve.start + 1}`}`;
+  const only = `--solver ${solve.solver} --case ${solve.case}`;
+  const isOneOfMany = solve.start !== null && suiteCase.starts.length > 1;
+  const command = [
+    `npm run tallyroot -- measure --build DIR --suite ${run.suite.slug} ${only} --json solve.json`,
+    `npm run tallyroot -- trace solve.json ${only}${isOneOfMany ? ` --start ${(solve.start ?? 0) + 1}` : ''}`,
+  ].join('\n');
   return (
     <Page
       title={name}
@@ -200,11 +203,22 @@ export function SolveSheet({ solve, reference, run, suiteCase, backTo }: SolveSh
           ))}
         </ul>
       </Entry>
-      <Entry title="At home" note="Prints this path from the results that are stored on this machine.">
+      <Entry
+        title="At home"
+        note="Runs this one case against a folder on your own machine and prints its path."
+      >
         <HomeCommand command={command} />
         <p className="text-note text-ink-3">
-          <Link to={paths.suiteCase(run.suite.slug, suiteCase.id, run.suite.revision)}>The case</Link> has the
-          equation and its starts, to type by hand.
+          DIR is a checkout of {run.library}
+          {run.build.commit === null ? (
+            ''
+          ) : (
+            <>
+              {' '}
+              at <span className="num">{formatCommit(run.build.commit)}</span>
+            </>
+          )}
+          , prepared so that it runs.
         </p>
       </Entry>
     </Page>
