@@ -2,7 +2,6 @@ import { Decimal } from 'decimal.js';
 import { describe, expect, it } from 'vitest';
 import { compileDecimal, evaluateDecimal } from '../../../shared/equations/decimal.ts';
 import { decimalFunctions } from '../../../shared/equations/decimal-functions.ts';
-import { exactDecimalText } from '../../../shared/equations/exact-decimal.ts';
 import { parseEquation } from '../../../shared/equations/parse-equation.ts';
 import { decimalReference } from './decimal-reference.ts';
 
@@ -121,19 +120,5 @@ describe('evaluateDecimal', () => {
       expect(() => evaluateDecimal(equation, { a }, '1', 20), a).toThrow(RangeError);
     }
     expect(() => evaluateDecimal(equation, {}, '1', 20)).toThrow(RangeError);
-  });
-});
-
-describe('exactDecimalText', () => {
-  it('is the value of a binary64 number to its last digit', () => {
-    // 0.1 in binary64, exactly: 0x1.999999999999ap-4.
-    const text = '0.1000000000000000055511151231257827021181583404541015625';
-    expect(new Decimal(exactDecimalText(0.1)).eq(text)).toBe(true);
-    for (const value of [1, -2.5, 2 ** 80, 2 ** -1074, Number.MAX_VALUE, -0.3, 1 / 3]) {
-      expect(Number(exactDecimalText(value))).toBe(value);
-    }
-    expect(new Decimal(exactDecimalText(2 ** 80)).eq('1208925819614629174706176')).toBe(true);
-    expect(Object.is(Number(exactDecimalText(-0)), -0)).toBe(true);
-    expect(() => exactDecimalText(Infinity)).toThrow(RangeError);
   });
 });
