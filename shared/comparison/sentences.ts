@@ -65,7 +65,7 @@ function headOf(
     const what = bad.length === 1 ? 'it' : bad.length === 2 ? 'both' : 'all of it';
     return { verdict: say`${text}; the allowances permit ${what}.`, rest };
   }
-  if (good.length > 0) return { verdict: say`${join(good).text}, and nothing got worse.`, rest: [] };
+  if (good.length > 0) return { verdict: say`${join(good).text}; nothing got worse.`, rest: [] };
   return { verdict: quietVerdict(comparison, compared), rest: [] };
 }
 
@@ -74,7 +74,14 @@ function join(clauses: readonly Clause[]): { text: RichText; rest: Clause[] } {
   const [first, second] = clauses;
   if (first === undefined) return { text: [], rest: [] };
   if (second === undefined || first.isLong) return { text: first.text, rest: clauses.slice(1) };
-  return { text: say`${first.text}, and ${second.text}`, rest: clauses.slice(mostClauses) };
+  return { text: say`${first.text}, and ${after(first, second)}`, rest: clauses.slice(mostClauses) };
+}
+
+/** The second of two statements; its subject is `it` where the first has the same. */
+function after(first: Clause, second: Clause): RichText {
+  const [subject, ...rest] = second.text;
+  const isSame = subject?.strong === true && subject.text === first.text[0]?.text;
+  return isSame ? [{ text: 'it' }, ...rest] : second.text;
 }
 
 function openVerdict(comparison: Comparison): RichText {
