@@ -103,9 +103,9 @@ describe('buildProgram', () => {
         expect(gap(fine!.first, first)).toBeLessThan(1e-12);
         expect(gap(fine!.second, second)).toBeLessThan(1e-12);
       }),
-      { numRuns: 300, seed: 5 },
+      { numRuns: 200, seed: 5 },
     );
-    expect(settled).toBeGreaterThan(100);
+    expect(settled).toBeGreaterThan(60);
   });
 
   it('differentiates by the variable that is asked for', () => {

@@ -180,11 +180,16 @@ describe('interpretDouble', () => {
   const same = (equation: Equation, parameters: Record<string, number>, arguments_: readonly number[]) => {
     const generated = compileDouble(equation, parameters);
     const interpreted = interpretDouble(equation, parameters);
+    let compared = 0;
     for (const x of arguments_) {
       for (const kind of ['f', 'df', 'd2f'] as const) {
-        expect(interpreted[kind](x), `${equation.text} ${kind} at ${x}`).toBe(generated[kind](x));
+        const [found, wanted] = [interpreted[kind](x), generated[kind](x)];
+        // Asserting each of some hundred thousand pairs would take longer than computing them.
+        if (!Object.is(found, wanted)) expect(found, `${equation.text} ${kind} at ${x}`).toBe(wanted);
+        compared += 1;
       }
     }
+    expect(compared).toBe(3 * arguments_.length);
   };
 
   it('gives the same bits as the generated code for every function', () => {
@@ -204,7 +209,7 @@ describe('interpretDouble', () => {
       fc.property(anyTree, fc.double({ min: -5, max: 5 }), (tree, a) => {
         same({ text: 'random', tree, variables: ['x'], parameters: ['a'] }, { a }, points);
       }),
-      { numRuns: 1200, seed: 3 },
+      { numRuns: 600, seed: 3 },
     );
   });
 });

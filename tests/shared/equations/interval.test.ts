@@ -179,7 +179,7 @@ describe('evaluateInterval', () => {
         const equation = { text: JSON.stringify(tree), tree, variables: ['x'], parameters: ['a'] };
         checkHolds(equation, { a: '1.7' }, low, low.plus(size));
       }),
-      { numRuns: 500, seed: 4 },
+      { numRuns: 300, seed: 4 },
     );
   });
 
