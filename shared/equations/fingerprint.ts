@@ -34,7 +34,7 @@ const special = [
   NaN,
 ];
 
-/** Numbers in [0, 1) from the linear congruential generator a = 1664525, c = 1013904223, m = 2^32 (Knuth). */
+/** Numbers in [0, 1) from the linear congruential generator a = 1664525, c = 1013904223, m = 2^32 (Press and others, Numerical Recipes; from memory). */
 function fractions(): () => number {
   let state = 20_250_101;
   return () => {
