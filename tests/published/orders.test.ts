@@ -6,7 +6,7 @@ import * as methods from '../helpers/methods.ts';
 
 /*
  * How well the estimator does on methods of known order: thirty equations from eight starts each, 240 runs a
- * method, in binary64 with exact errors. The bounds were set beforehand from a prototype on 45 other equations
+ * method, in binary64 with exact errors. The bounds were set beforehand from an earlier trial on 45 equations
  * (360 runs a method); what is found here is given beside them.
  * Orders: Ostrowski 1960 and Traub 1964 (textbook), Pegasus 7.275^(1/4) Dowell & Jarratt 1972, BIT 12, 503–508;
  * from memory.
