@@ -107,16 +107,19 @@ function jumps(problem: Problem, value: string): boolean {
 }
 
 /**
- * Half the width of the stretch around r on which binary64 f is exactly 0, at most `most` to each side; by
- * halving, to nine digits.
+ * Half the width of the stretch around r on which binary64 f is exactly 0, at most `most` to each side: doubled
+ * outward from half an ulp while f is 0, then halved to nine digits.
  */
 function zeroHalfWidth(f: CompiledDouble['f'], root: number, most: number): number {
   const side = (sign: 1 | -1): number => {
-    if (f(root + sign * most) === 0) return most;
     let inside = 0;
-    let outside = most;
-    // 1100 halvings reach from the largest binary64 to the least.
-    for (let step = 0; step < 1100 && outside - inside > 1e-9 * outside; step += 1) {
+    let outside = Math.min(ulpOf(root), most);
+    while (f(root + sign * outside) === 0) {
+      if (outside >= most) return most;
+      inside = outside;
+      outside = Math.min(2 * outside, most);
+    }
+    while (inside > 0 && outside - inside > 1e-9 * outside) {
       const middle = inside + (outside - inside) / 2;
       if (middle === inside || middle === outside) break;
       if (f(root + sign * middle) === 0) inside = middle;
@@ -124,7 +127,7 @@ function zeroHalfWidth(f: CompiledDouble['f'], root: number, most: number): numb
     }
     return inside;
   };
-  return Math.min(most, side(1) / 2 + side(-1) / 2);
+  return f(root) === 0 ? Math.min(most, side(1) / 2 + side(-1) / 2) : 0;
 }
 
 /**
@@ -132,9 +135,9 @@ function zeroHalfWidth(f: CompiledDouble['f'], root: number, most: number): numb
  * tell x from r (absolute, in the unit of x):
  * F = max(ulp(r)/2, (m! η / |f⁽ᵐ⁾(r)|)^(1/m)), with η measured, since the form of f decides it.
  *
- * At r = 0 the ulps are subnormal and say nothing of rounding in f: there F is also at least half the width of
- * the stretch on which binary64 f is exactly 0 (x − sin x is 0 below 1e-8 or so). Where f jumps at r there is
- * no derivative, and F = ulp(r)/2.
+ * Where binary64 f is exactly 0 on a stretch around r, F is also at least half its width: f may be 0 far beyond
+ * the 16 ulps over which η is measured (x − sin x is 0 below 1e-8 or so, and at r = 0 ulps are subnormal).
+ * Where f jumps at r there is no derivative, and F = ulp(r)/2.
  *
  * Flat roots (all derivatives 0): half the width on which binary64 f is exactly 0, at most 1e-2 of the
  * bracket, or 1e-2 max(1, |r|) without one; to be taken once where F is elsewhere taken 16 times.
@@ -157,7 +160,7 @@ export function attainableAccuracy(
   if (isFlatRoot(problem, root.value)) return zeroWidth();
   const coefficient = leadingCoefficient(problem, root);
   if (coefficient === null) throw new RangeError(`f is undefined around ${root.value}`);
-  const least = Math.max(ulpOf(rounded) / 2, rounded === 0 ? zeroWidth() : 0);
+  const least = Math.max(ulpOf(rounded) / 2, zeroWidth());
   if (coefficient.isZero() || jumps(problem, root.value)) return least;
   const error = evaluationError(problem, f, rounded);
   const Wide = Decimal.clone({ precision: 30, minE: -9e15, maxE: 9e15 });

@@ -234,12 +234,12 @@ function byStatement(problem: Problem, claimed: Claimed, x: Decimal, digits: num
   const right = certainSign(problem, new Wide(x).plus(h), precision);
   const isCrossed = left !== null && right !== null && left * right === -1;
   if (claimed.statement === null) {
-    if (isCrossed || at === 0) {
-      return refuse(
-        `f is 0 at ${claimed.value} or changes sign there, but no certificate holds; say why it is a root: statement: …`,
-      );
-    }
-    return refuse(`f does not change sign at ${claimed.value}: it is no root of odd multiplicity`);
+    const isEven = left !== null && left === right;
+    return isEven || (!isCrossed && at !== 0)
+      ? refuse(`f does not change sign at ${claimed.value}: it is no root of odd multiplicity`)
+      : refuse(
+          `f is 0 at ${claimed.value} or changes sign there, but no certificate holds; say why it is a root: statement: …`,
+        );
   }
   if (at !== 0 && !isCrossed) return refuse(`f is not 0 at ${claimed.value} and does not change sign there`);
   return certificateOf(x, digits, precision, 'by statement');

@@ -4,7 +4,8 @@ import { certifyAll } from '../../shared/suites/certify-all.ts';
 
 /**
  * Certifies every root of the built-in suites afresh and writes `suites/certificates.json`:
- * `npx tsx tests/suites/write-certificates.ts`, after every change to a suite or to the certifier.
+ * `npx tsx tests/suites/write-certificates.ts`, after every change to a suite or to the certifier;
+ * then `npx biome check --write suites`.
  */
 const folder = fileURLToPath(new URL('../../suites/', import.meta.url));
 const names = readdirSync(folder)

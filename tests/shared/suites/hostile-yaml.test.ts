@@ -1,0 +1,58 @@
+import { describe, expect, it } from 'vitest';
+import { AppError } from '../../../shared/errors.ts';
+import { readSuiteText } from '../../../shared/suites/read-suite.ts';
+
+const hostile: [name: string, text: string, expected: RegExp][] = [
+  ['aliases that multiply', 'a: &a [x, x]\nb: &b [*a, *a]\nc: [*b, *b]\n', /Anchors are refused/],
+  ['an alias alone', 'format: *one\n', /alias|Aliases/i],
+  ['tags', 'format: !!binary MQ==\n', /Tags are refused/],
+  ['open brackets without end', '['.repeat(500_000), /Nesting deeper than/],
+  ['open braces without end', '{a: '.repeat(200_000), /Nesting deeper than/],
+  ['nested sequences on a line', '- '.repeat(500_000), /Nesting deeper than/],
+  ['nested explicit keys', '? '.repeat(500_000), /Nesting deeper than/],
+  [
+    'a staircase of keys',
+    Array.from({ length: 500 }, (_, i) => `${' '.repeat(i)}a:`).join('\n'),
+    /Nesting deeper/,
+  ],
+  ['ten megabytes', 'a'.repeat(10_000_000), /at most 1048576 bytes/],
+  ['a megabyte in few characters', 'é'.repeat(600_000), /larger than 1048576 bytes/],
+  ['half a million values', `a: [${'1,'.repeat(500_000)}]`, /More than 200000 values/],
+  ['a million line ends', '\n'.repeat(1_000_000), /More than 200000 values/],
+  [
+    'sixty thousand keys',
+    Array.from({ length: 60_000 }, (_, i) => `k${i}: 1`).join('\n'),
+    /More than 200000 values/,
+  ],
+  ['wrong escapes by the thousand', `a: "${'\\q'.repeat(500_000)}"`, /backslashes/],
+  ['two documents', 'format: 1\n---\nformat: 1\n', /a second one begins here/],
+  ['a key twice', 'format: 1\nformat: 1\n', /stands here twice/],
+  ['a key that reaches into objects', '__proto__: { a: 1 }\n', /This key is refused/],
+  ['keys that are no texts', '? [a, b]\n: c\n', /no valid YAML/],
+  ['no YAML at all', 'a: [1, 2\nb: 3\n', /no valid YAML/],
+  ['nothing', '', /block of named values was expected/],
+  ['control characters', '\u0002\u0018\u001f', /expected|YAML/],
+];
+
+describe('readSuiteText on hostile text', () => {
+  it.each(hostile)('refuses %s', (_name, text, expected) => {
+    let caught: unknown;
+    try {
+      readSuiteText(text);
+    } catch (error) {
+      caught = error;
+    }
+    expect(caught).toBeInstanceOf(AppError);
+    expect(String(caught)).toMatch(expected);
+  });
+
+  it('tells at most 100 mistakes', () => {
+    const bad = Array.from({ length: 300 }, (_, i) => `  - id: A${i}\n    equation: x\n`).join('');
+    try {
+      readSuiteText(`format: 1\nid: a\ntitle: A\ncases:\n${bad}`);
+      expect.unreachable();
+    } catch (error) {
+      expect(error instanceof AppError && error.issues.length).toBe(100);
+    }
+  });
+});
