@@ -79,7 +79,7 @@ const columns: readonly Column[] = [
 
 const plainNumber = /^[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?$/;
 const actsAsFormula = /^[=+\-@\t\r\n'＝＋－＠]/;
-const cannotBeShown = /[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f-\u009f]|\p{Cs}/gu;
+const cannotBeShown = /(?![\t\r\n])\p{Cc}|\p{Cs}/gu;
 
 function cellText(cell: Cell): string {
   if (cell === null) return '';

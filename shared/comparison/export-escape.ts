@@ -4,7 +4,7 @@ const joiner = '\u2060';
  * A text that Markdown shows as it is, in one line, in a paragraph or in a cell of a table.
  *
  * Control characters, line breaks and bidirectional marks become a blank or U+FFFD; every punctuation mark that
- * means something to Markdown or HTML is escaped. Hosts look for mentions, numbers of issues, addresses and
+ * means something to Markdown or HTML within a line is escaped (a caller never begins a line with such a text). Hosts look for mentions, numbers of issues, addresses and
  * signs of emotion after they have taken the escapes away, so an invisible word joiner parts what would start
  * one: after @, after # and ! before a letter or digit, after : before / or a letter, after www and in GH-1.
  */
@@ -12,7 +12,7 @@ export function escapeMarkdown(text: string): string {
   return text
     .replace(/\s+/gu, (blank) => (/[\u202f\u00a0]/.test(blank) && blank.length === 1 ? blank : ' '))
     .replace(/[\p{Cc}\p{Bidi_Control}\p{Cs}\u200b\ufeff]/gu, '\ufffd')
-    .replace(/[\\`*_{}[\]()<>#!|~&@$^:"']/g, (mark) => `\\${mark}`)
+    .replace(/[\\`*_{}[\]()<>#!|~&@$^]|={2,}/g, (marks) => marks.replace(/./g, '\\$&'))
     .replace(/@/g, `@${joiner}`)
     .replace(/([#!:])(?=[\p{L}\p{N}+\-/])/gu, `$1${joiner}`)
     .replace(/(www)(?=\.)/gi, `$1${joiner}`)

@@ -12,7 +12,7 @@ export const mostChanges = 10;
 const cellLength = 200;
 
 /**
- * A comparison as GitHub-flavoured Markdown for a comment: verdict sentence, breaches, totals of each solver, the
+ * A comparison as Markdown with tables, for a comment: verdict sentence, breaches, totals of each solver, the
  * ten gravest changes, and the sentence about what results are. Whatever comes from outside is escaped; a line
  * never begins with it.
  */
