@@ -22,8 +22,7 @@ export function exportMarkdown(comparison: Comparison): string {
   const changed = changedPairs(comparison.pairs);
   const blocks = [
     `**${capital(comparison.verdict)}:** ${richText(words.verdict)}`,
-    `Compared: ${sides}.`,
-    words.lead.length === 0 ? '' : `Also: ${words.lead.map(richText).join(' ')}`,
+    [`Compared: ${sides}.`, ...words.lead.map(richText)].join(' '),
     breachList(comparison),
     comparison.totals.length === 0 ? '' : totalsTable(comparison.totals),
     changed.length === 0 ? '' : changesTable(changed.slice(0, mostChanges)),
@@ -86,7 +85,7 @@ function changesTable(pairs: readonly Pair[]): string {
 
 function restSentence({ pairs }: Comparison, changed: number): string {
   const same = pairs.length - changed;
-  const counted = same === 1 ? '1 pair is the same' : `${same} pairs are the same`;
+  const counted = same === 0 ? 'none is the same' : same === 1 ? '1 is the same' : `${same} are the same`;
   const rest = changed - mostChanges;
   if (rest <= 0) return `Of ${pairs.length} pairs in all, ${counted}.`;
   const others = rest === 1 ? 'one more changed' : `${rest} more changed`;

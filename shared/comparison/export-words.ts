@@ -29,12 +29,14 @@ function figure(value: number | null): string {
   return value === null ? '–' : String(Number(value.toFixed(3))).replace('-', '−');
 }
 
+const allowed = (limit: number): string => (limit === 0 ? 'none' : figure(limit));
+
 const breachPatterns: Record<AllowanceName, (found: number | null, limit: number) => string> = {
-  broke: (found, limit) => `${few(found, 'pair', 'pairs')} broke; ${figure(limit)} may`,
+  broke: (found, limit) => `${few(found, 'pair', 'pairs')} broke; ${allowed(limit)} may`,
   rootMoved: (found, limit) =>
-    `${few(found, 'pair ends', 'pairs end')} at another root; ${figure(limit)} may`,
+    `${few(found, 'pair ends', 'pairs end')} at another root; ${allowed(limit)} may`,
   unsteady: (found, limit) =>
-    `${few(found, 'pair does', 'pairs do')} not repeat to the last bit; ${figure(limit)} may`,
+    `${few(found, 'pair does', 'pairs do')} not repeat to the last bit; ${allowed(limit)} may`,
   totalPercent: (found, limit) =>
     found === null
       ? `evaluations in total rose from 0; at most ${figure(limit)} % more is allowed`
