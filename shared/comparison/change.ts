@@ -136,13 +136,19 @@ export function isOrderKnown(
 }
 
 /**
+ * An error within this many times the attainable accuracy F is as good as none: the answer is there, the same
+ * limit as the query check's. At a well-conditioned root, where F is half an ulp, it is one ulp.
+ */
+const answerFactor = 2;
+
+/**
  * Correct digits that `after` has fewer than `before`, where its error is beyond the attainable accuracy of
  * the root; else 0, because the case cannot give more.
  */
 export function digitsLost(pair: MatchedPair, before: SolveRecord, after: SolveRecord): number {
   if (before.digits === null || after.digits === null || after.error === null) return 0;
   const attainable = after.nearest === null ? 0 : (pair.case.roots?.[after.nearest]?.attainable ?? 0);
-  if (after.exact || Math.abs(after.error) <= attainable) return 0;
+  if (after.exact || Math.abs(after.error) <= answerFactor * attainable) return 0;
   return Math.max(0, before.digits - after.digits - digitsRounding);
 }
 

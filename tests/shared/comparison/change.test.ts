@@ -113,8 +113,9 @@ describe('changesOf', () => {
       { ...off(16), pathHash: 'a' },
       (digits: number) => ({ ...off(digits), pathHash: 'b' }),
     ];
-    expect(pairOf(was, is(11.001), { cases }).change).toBe('drifted');
-    expect(pairOf(was, is(10.999), { cases }).change).toBe('less accurate');
+    // Twice 1e-11, relative to the root: 10.699 digits.
+    expect(pairOf(was, is(10.71), { cases }).change).toBe('drifted');
+    expect(pairOf(was, is(10.69), { cases }).change).toBe('less accurate');
   });
 
   it('calls the order lost where the intervals lie apart, never on the values alone', () => {
