@@ -6,6 +6,8 @@ import { refineRoot } from './refine-root.ts';
 import type { Equation } from './tree.ts';
 
 const digits = 40;
+/** Newton's method is given up once it is so many radii away: it seldom comes back. */
+const strayFactor = 100;
 const mostHalvings = 160;
 /** After so many halvings |f| at the ends has to have fallen to less than half, or it is no root. */
 const shrinkEvery = 16;
@@ -83,7 +85,7 @@ export function certifyNear(
   const start = new Wide(exactDecimal(x));
   const reach = new Wide(exactDecimal(radius));
   try {
-    const refined = refineRoot(problem, start, digits);
+    const refined = refineRoot(problem, start, digits, reach.times(strayFactor));
     if ('root' in refined && within(refined.root, start, reach)) {
       const root = new Wide(refined.root.toSignificantDigits(digits + 5));
       for (const precision of precisions) if (isCertified(problem, root, precision)) return root.toString();

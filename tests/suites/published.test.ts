@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
+import { Decimal } from 'decimal.js';
 import { describe, expect, it } from 'vitest';
 import { readSuiteText } from '../../shared/suites/read-suite.ts';
 
@@ -33,7 +34,7 @@ const published: [suite: string, id: string, value: string, source: string][] = 
     '0.567143290409783872999968662210355',
     'omega constant, OEIS A030178, from memory',
   ],
-  ['open-starts', 'plastic', '1.3247179572447460260', 'plastic number, from memory'],
+  ['open-starts', 'plastic', '1.324717957244746026', 'plastic number, from memory'],
   ['open-starts', 'tribonacci', '1.8392867552141611326', 'tribonacci constant, from memory'],
   ['open-starts', 'leonardo', '1.368808107', 'Leonardo of Pisa (1225), Flos, from memory'],
   ['traps', 'pole-edge', '0.095344617200258', 'Burkardt, test_zero collection, problem 4'],
@@ -49,8 +50,11 @@ const published: [suite: string, id: string, value: string, source: string][] = 
 ];
 
 describe('built-in roots', () => {
-  it.each(published)('%s: %s begins with the published %s (%s)', (suite, id, value) => {
-    expect(rootOf(suite, id).startsWith(value)).toBe(true);
+  it.each(published)('%s: %s is the published %s to its last digit (%s)', (suite, id, value) => {
+    const lastDigit = new Decimal(10).pow(-new Decimal(value).decimalPlaces());
+    const distance = new Decimal(rootOf(suite, id)).minus(value).abs();
+    // Printed values are rounded or cut at their last digit.
+    expect(distance.lt(lastDigit)).toBe(true);
   });
 
   // Alefeld, Potra and Shi (1995), Table I: closed forms, worked out here in binary64.

@@ -8,8 +8,8 @@ const near = (text: string, x: number, radius: number, parameters: Record<string
 
 describe('certifyNear', () => {
   it('finds a simple root to 45 digits', () => {
-    expect(near('x^2 - 2', 1.414, 1e-3)).toBe('1.41421356237309504880168872420969807856967188');
-    expect(near('x^2 - n', -1.414, 1e-3, { n: '2' })).toBe('-1.41421356237309504880168872420969807856967188');
+    expect(near('x^2 - 3', 1.732, 1e-3)).toBe('1.73205080756887729352744634150587236694280525');
+    expect(near('x^2 - n', -1.732, 1e-3, { n: '3' })).toBe('-1.73205080756887729352744634150587236694280525');
   });
 
   it('finds exact roots, roots at 0, and roots of odd multiplicity', () => {
