@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { AppError } from '../../../shared/errors.ts';
 import { readSuiteText } from '../../../shared/suites/read-suite.ts';
@@ -54,5 +55,68 @@ describe('readSuiteText on hostile text', () => {
     } catch (error) {
       expect(error instanceof AppError && error.issues.length).toBe(100);
     }
+  });
+
+  it('answers every damaged suite with a reading or an AppError that has a place for each mistake', () => {
+    const text = `format: 1
+id: a
+title: A
+cases:
+  - id: b
+    equation: "x < n ? x^2 - n : 1"
+    sweep: { n: [2, 3], 'k, m': [[1, 2]] }
+    bracket: [0, pi/2 + 1e-9]
+    starts: [[1], [{ each: [1, 2] }]]
+    roots: [{ value: sqrt(n), simple: x - 1, multiplicity: 2 }]
+    traits: [multiple]
+    source: Constructed
+`;
+    const pieces = [
+      '',
+      ' ',
+      '\n',
+      ':',
+      '- ',
+      '[',
+      ']',
+      '{',
+      '}',
+      "'",
+      '"',
+      '&a',
+      '*a',
+      '!!x',
+      '1e999',
+      '|',
+      '>',
+      '?',
+      '#',
+      'é',
+      '\t',
+    ];
+    const damage = fc.record({
+      at: fc.nat(text.length),
+      cut: fc.nat(12),
+      put: fc.constantFrom(...pieces),
+    });
+    fc.assert(
+      fc.property(fc.array(damage, { minLength: 1, maxLength: 3 }), (damages) => {
+        let damaged = text;
+        for (const { at, cut, put } of damages)
+          damaged = damaged.slice(0, at) + put + damaged.slice(at + cut);
+        try {
+          readSuiteText(damaged);
+        } catch (error) {
+          if (!(error instanceof AppError)) throw error;
+          expect(error.issues.length).toBeGreaterThan(0);
+          const lines = damaged.split('\n').length;
+          for (const { line, column } of error.issues) {
+            expect(line !== undefined && line >= 1 && line <= lines).toBe(true);
+            expect(column !== undefined && column >= 1).toBe(true);
+          }
+        }
+      }),
+      { seed: 4, numRuns: 300 },
+    );
   });
 });
