@@ -1,25 +1,35 @@
 /**
- * A program that works on the runs of a database file until none is left, as the server does. Tests end it
- * without warning. Prints a line once it is ready to work.
+ * A program that works on the runs of a database file until none is left, as the server does, with a stand-in
+ * for the measuring. Tests end it without warning. Prints a line once it works.
  */
 import { setTimeout as wait } from 'node:timers/promises';
-import { openServices } from '../../server/open-services.ts';
+import { openDatabase } from '../../server/db/client.ts';
+import { createServices } from '../../server/features/services.ts';
+import { recipe } from '../../shared/schemas/builds.ts';
+import { createFakeMeasuring } from './app-fake-measuring.ts';
+import { changedShape, testEnvironment } from './builders.ts';
 
-const [databaseFile = ''] = process.argv.slice(2);
-const { services, client } = openServices({
-  databaseFile,
-  lanes: 1,
-  hasBuiltInSuites: false,
-  onJobError: (_job, error) => {
-    process.stderr.write(`${error instanceof Error ? error.stack : String(error)}\n`);
-    process.exitCode = 1;
-  },
-});
-process.stdout.write('ready\n');
-services.jobRunner.start();
-const open = client.sqlite
-  .prepare<[], number>("SELECT count(*) FROM jobs WHERE status IN ('queued', 'running')")
-  .pluck();
-while (open.get() !== 0) await wait(20);
-await services.jobRunner.stop();
-client.close();
+async function work(databaseFile: string): Promise<void> {
+  const client = openDatabase(databaseFile);
+  const { jobRunner } = createServices({
+    client,
+    measuring: createFakeMeasuring({ delayMs: 4, shape: changedShape }),
+    readManifest: (text) => recipe.parse(JSON.parse(text)),
+    environment: testEnvironment,
+    lanes: 1,
+    onJobError: (_job, error) => {
+      process.stderr.write(`${error instanceof Error ? error.stack : String(error)}\n`);
+      process.exitCode = 1;
+    },
+  });
+  jobRunner.start();
+  process.stdout.write('works\n');
+  const open = client.sqlite
+    .prepare<[], number>("SELECT count(*) FROM jobs WHERE status IN ('queued', 'running')")
+    .pluck();
+  while (open.get() !== 0) await wait(20);
+  await jobRunner.stop();
+  client.close();
+}
+
+void work(process.argv[2] ?? '');

@@ -125,3 +125,11 @@ export const testEnvironment: Environment = {
   fingerprint: 'f0'.repeat(16),
   confinement: 'unconfined',
 };
+
+/** A build whose file `salt` says `changed` asks once more on every case whose name ends in 7. */
+export function changedShape(record: SolveRecord, salt: string): Partial<SolveRecord> {
+  if (salt !== 'changed' || !record.case.endsWith('7')) return {};
+  const more = { evaluations: record.evaluations + 1, f: record.f + 1 };
+  const [first = ''] = record.pathHash;
+  return { ...more, pathHash: `${first === '0' ? '1' : '0'}${record.pathHash.slice(1)}` };
+}
