@@ -26,13 +26,14 @@ export interface CaseTool {
   roots: JudgedRoot[];
 }
 
-/** Work comes case by case, so a few tools are enough. */
-const KEPT_TOOLS = 8;
+/** Tools outlive a run, since the next build meets the same suite; the oldest go first. */
+const KEPT_TOOLS = 1000;
+const keptTools = new Map<string, CaseTool>();
 
 export class CaseTools {
   readonly #cases: readonly SuiteCase[];
   readonly #equations: readonly Equation[];
-  readonly #tools = new Map<number, CaseTool>();
+  readonly #tools: (CaseTool | undefined)[] = [];
 
   /** `equations`: those of the cases, read already. */
   constructor(cases: readonly SuiteCase[], equations: readonly Equation[]) {
@@ -41,15 +42,22 @@ export class CaseTools {
   }
 
   of(index: number): CaseTool {
-    const known = this.#tools.get(index);
-    if (known) return known;
+    const tool = this.#tools[index] ?? this.#find(index);
+    this.#tools[index] = tool;
+    return tool;
+  }
+
+  #find(index: number): CaseTool {
     const suiteCase = this.#cases[index];
     const equation = this.#equations[index];
     if (!suiteCase || !equation) throw new RangeError(`There is no case ${index}.`);
+    const key = JSON.stringify([suiteCase.equation, suiteCase.parameters, suiteCase.roots]);
+    const kept = keptTools.get(key);
+    if (kept) return { ...kept, suiteCase };
     const tool = makeCaseTool(suiteCase, equation);
-    const [oldest] = this.#tools.keys();
-    if (oldest !== undefined && this.#tools.size >= KEPT_TOOLS) this.#tools.delete(oldest);
-    this.#tools.set(index, tool);
+    const [oldest] = keptTools.keys();
+    if (oldest !== undefined && keptTools.size >= KEPT_TOOLS) keptTools.delete(oldest);
+    keptTools.set(key, tool);
     return tool;
   }
 }
@@ -167,6 +175,18 @@ function finiteOrNull(value: number): number | null {
   return Number.isFinite(value) ? value : null;
 }
 
+/**
+ * Whether there is plainly no root within `radius` of x, so that the search for one, which takes milliseconds,
+ * can be spared: f has one sign at x and at both ends, and a Newton step from x leads ten radii away. Two roots
+ * between the ends would show either in the sign at x, between them, or in a short step, beside them.
+ */
+function isFarFromRoots({ f, df }: Evaluator, x: number, radius: number): boolean {
+  const y = f(x);
+  const sign = Math.sign(y);
+  const isOneSign = sign !== 0 && Math.sign(f(x - radius)) === sign && Math.sign(f(x + radius)) === sign;
+  return isOneSign && Math.abs(y) > 10 * radius * Math.abs(df(x));
+}
+
 interface Judged {
   outcome: Outcome;
   remarks: Remark[];
@@ -185,7 +205,10 @@ function judge(input: RecordInput, claimed: number | null, residual: number | nu
         expectation,
         tolerance: solver.tolerance,
         residual,
-        certifyNear: (x, radius) => certifyNear(tool.equation, tool.suiteCase.parameters, x, radius),
+        certifyNear: (x, radius) =>
+          isFarFromRoots(tool.evaluator, x, radius)
+            ? null
+            : certifyNear(tool.equation, tool.suiteCase.parameters, x, radius),
       });
     case 'fail': {
       const remarks: Remark[] = [];
