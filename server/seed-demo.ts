@@ -3,7 +3,7 @@ import path from 'node:path';
 import type { Config } from './config.ts';
 import type { Services } from './features/services.ts';
 
-type Seed = (services: Services) => Promise<void>;
+type Seed = (services: Services, folder: string) => Promise<void>;
 
 function isSeed(value: unknown): value is Seed {
   return typeof value === 'function';
@@ -30,7 +30,7 @@ export async function seedDemoOnce(config: Config, services: Services): Promise<
   const seed = await loadSeed();
   if (!seed) return false;
   writeFileSync(note, 'begun\n');
-  await seed(services);
+  await seed(services, path.join(config.dataFolder, 'demo'));
   writeFileSync(note, 'done\n');
   return true;
 }

@@ -18,7 +18,7 @@ export function hybrid(f, a, b, tolerance, most, step) {
   let stalled = false;
   for (let k = 1; k <= most; k += 1) {
     let c = x - fx * ((x - p) / (fx - fp));
-    if (k > BISECTIONS && near(x, c, tolerance)) return root(c, k - 1);
+    if (k > BISECTIONS && Number.isFinite(c) && near(x, c, tolerance)) return root(c, k - 1);
     const inside = (c - low) * (c - high) < 0;
     const halves = k <= BISECTIONS || !inside || stalled;
     if (halves) c = low + (high - low) / 2;
