@@ -1,10 +1,10 @@
-import { parseEquation } from '../../shared/equations/parse-equation.ts';
 import { AppError } from '../../shared/errors.ts';
 import type { SuiteCase } from '../../shared/schemas/case.ts';
 import type { Environment } from '../../shared/schemas/measurement.ts';
 import type { Path } from '../../shared/schemas/path.ts';
 import type { SolveRecord } from '../../shared/schemas/solve.ts';
 import type { SolverDeclaration } from '../../shared/schemas/solver.ts';
+import { equationOf } from './kept-equations.ts';
 import { Lane } from './lane.ts';
 import type { DoneSolve, LaneJob, LaneLimits } from './lane-messages.ts';
 import { WorkQueue } from './lane-state.ts';
@@ -137,9 +137,7 @@ class Run {
       queue: this.#queue.shared,
       solvers,
       cases,
-      equations: cases.map((suiteCase) =>
-        parseEquation(suiteCase.equation, Object.keys(suiteCase.parameters)),
-      ),
+      equations: cases.map(equationOf),
       work: this.#work,
       limits: this.#limits,
       isFresh: fresh,
