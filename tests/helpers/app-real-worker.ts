@@ -1,6 +1,6 @@
 /**
  * A program that works on the runs of a database file until none is left, as the server does. Tests end it
- * without warning. Prints a line once it is ready to work.
+ * without warning.
  */
 import { setTimeout as wait } from 'node:timers/promises';
 import { openServices } from '../../server/open-services.ts';
@@ -15,7 +15,6 @@ const { services, client } = openServices({
     process.exitCode = 1;
   },
 });
-process.stdout.write('ready\n');
 services.jobRunner.start();
 const open = client.sqlite
   .prepare<[], number>("SELECT count(*) FROM jobs WHERE status IN ('queued', 'running')")

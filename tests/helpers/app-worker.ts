@@ -1,6 +1,6 @@
 /**
  * A program that works on the runs of a database file until none is left, as the server does, with a stand-in
- * for the measuring. Tests end it without warning. Prints a line once it works.
+ * for the measuring. Tests end it without warning.
  */
 import { setTimeout as wait } from 'node:timers/promises';
 import { openDatabase } from '../../server/db/client.ts';
@@ -23,7 +23,6 @@ async function work(databaseFile: string): Promise<void> {
     },
   });
   jobRunner.start();
-  process.stdout.write('works\n');
   const open = client.sqlite
     .prepare<[], number>("SELECT count(*) FROM jobs WHERE status IN ('queued', 'running')")
     .pluck();

@@ -18,33 +18,47 @@ import { cubeRoots, writeRealBuild } from '../../helpers/app-real-build.ts';
 import { buildCase, buildRevision } from '../../helpers/builders.ts';
 
 const actor = { name: 'local' };
-const kills = 24;
+const kills = 22;
+
+/** Whole numbers below a bound, the same in every run of the test (Lehmer's generator, modulus 2^31 - 1). */
+function createDraw(seed: number): (below: number) => number {
+  let state = seed;
+  return (below) => {
+    state = (state * 16_807) % 2_147_483_647;
+    return state % below;
+  };
+}
 
 interface Program {
   argv: string[];
   environment: NodeJS.ProcessEnv;
 }
 
-/** Works on a database until all is done, or until it is killed `killAfterMs` after it began. */
+/** Works on a database until all is done, or until it is killed once `isTime` says so. */
 async function work(
   program: Program,
   databaseFile: string,
-  killAfterMs?: number,
+  isTime?: () => boolean,
 ): Promise<{ code: number | null; errors: string }> {
   const child = spawn(process.execPath, [...program.argv, databaseFile], {
-    stdio: ['ignore', 'pipe', 'pipe'],
+    stdio: ['ignore', 'ignore', 'pipe'],
     env: program.environment,
   });
-  const ended = new Promise<number | null>((resolve) => child.on('exit', resolve));
+  let hasEnded = false;
+  const ended = new Promise<number | null>((resolve) => {
+    child.on('exit', (code) => {
+      hasEnded = true;
+      resolve(code);
+    });
+  });
   let errors = '';
   child.stderr.on('data', (chunk: Buffer) => {
     errors += chunk.toString();
   });
-  if (killAfterMs !== undefined) {
-    await Promise.race([new Promise((resolve) => child.stdout.once('data', resolve)), ended]);
-    await Promise.race([wait(killAfterMs), ended]);
+  if (isTime) {
+    while (!hasEnded && !isTime()) await wait(5);
     child.kill('SIGKILL');
-  } else child.stdout.resume();
+  }
   return { code: await ended, errors };
 }
 
@@ -124,7 +138,8 @@ describe('a run whose server is killed', () => {
     await app.services.jobRunner.stop();
     const folder = makeBuildFolder({ files: { salt: 'changed' } });
     const changed = await builds.registerFolder(actor, 'pocket-roots', { folder });
-    const { id } = runs.start(actor, { build: changed.build.id, suite: 'many' });
+    const settings = { confirm: 'all' as const };
+    const { id } = runs.start(actor, { build: changed.build.id, suite: 'many', settings });
     app.client.sqlite.pragma('wal_checkpoint(TRUNCATE)');
     const killed = `${app.file}.killed`;
     const undisturbed = `${app.file}.undisturbed`;
@@ -132,19 +147,34 @@ describe('a run whose server is killed', () => {
     copyFileSync(app.file, undisturbed);
     expect(await work(program, undisturbed)).toEqual({ code: 0, errors: '' });
 
-    let seed = 20_260;
+    // Killed after a number of solves more that is drawn, and a moment later that is drawn as well, so that
+    // the kills fall everywhere, in the middle of a transaction too, on fast and on slow machines.
+    const watcher = openDatabase(killed);
+    const doneOf = watcher.sqlite
+      .prepare<[number], number>('SELECT stored + confirmed FROM runs WHERE id = ?')
+      .pluck();
+    const draw = createDraw(20_260);
     let progress = { stored: 0, confirmed: 0 };
-    let inTheMiddle = 0;
+    let inMeasuring = 0;
+    let inConfirming = 0;
     for (let kill = 0; kill < kills; kill += 1) {
-      seed = (seed * 16_807) % 2_147_483_647;
-      await work(program, killed, seed % 260);
+      const goal = progress.stored + progress.confirmed + draw(60);
+      const delayMs = draw(60);
+      let from = Number.POSITIVE_INFINITY;
+      await work(program, killed, () => {
+        if (from === Number.POSITIVE_INFINITY && (doneOf.get(id) ?? 0) >= goal) from = performance.now();
+        return performance.now() - from >= delayMs;
+      });
       const now = checkStore(killed, id);
       expect(now.stored).toBeGreaterThanOrEqual(progress.stored);
       expect(now.confirmed).toBeGreaterThanOrEqual(progress.confirmed);
-      if (now.stored > progress.stored || now.confirmed > progress.confirmed) inTheMiddle += 1;
+      if (now.stored > progress.stored && now.stored < 300) inMeasuring += 1;
+      if (now.confirmed > progress.confirmed && now.confirmed < 300) inConfirming += 1;
       progress = now;
     }
-    expect(inTheMiddle).toBeGreaterThan(1);
+    watcher.close();
+    expect(inMeasuring).toBeGreaterThan(1);
+    expect(inConfirming).toBeGreaterThan(1);
     expect(await work(program, killed)).toEqual({ code: 0, errors: '' });
 
     checkStore(killed, id);
@@ -156,8 +186,8 @@ describe('a run whose server is killed', () => {
     expect(run.progress).toMatchObject({
       planned: 300,
       stored: 300,
-      toConfirm: 30,
-      confirmed: 30,
+      toConfirm: 300,
+      confirmed: 300,
       unsteady: 0,
     });
   }, 120_000);
