@@ -45,7 +45,7 @@ export interface Config {
 export const searchPath = process.env.PATH ?? '/usr/bin:/bin';
 
 /** Reads the environment once; nothing else looks at it. */
-export function readConfig(env: Record<string, string | undefined>): Config {
+export function readConfig(env: Record<string, string | undefined> = process.env): Config {
   const parsed = environmentVariables.safeParse(env);
   if (!parsed.success) {
     const issues = issuesOf(parsed.error);

@@ -6,7 +6,7 @@ import { closeOnSignals, runMain, serve } from './serve.ts';
 
 /** The server with the client from its sources, which change in the browser as they are edited. */
 await runMain(async () => {
-  const config = readConfig(process.env);
+  const config = readConfig();
   const running = await serve({
     config,
     isDevelopment: true,

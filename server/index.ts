@@ -8,7 +8,7 @@ import { closeOnSignals, runMain, serve } from './serve.ts';
 await runMain(async () => {
   const dist = fileURLToPath(new URL('../dist', import.meta.url));
   const site = () => (existsSync(dist) ? staticSite(dist) : []);
-  const running = await serve({ config: readConfig(process.env), site });
+  const running = await serve({ config: readConfig(), site });
   closeOnSignals(running);
   process.stdout.write(`Tallyroot is at ${running.address}\n`);
 });

@@ -23,7 +23,7 @@ async function loadSeed(): Promise<Seed | undefined> {
  */
 export async function seedDemoOnce(config: Config, services: Services): Promise<boolean> {
   if (!config.hasDemo) return false;
-  const note = path.join(config.dataFolder, 'demo.txt');
+  const note = path.join(config.dataFolder, 'demo-state.txt');
   const state = existsSync(note) ? readFileSync(note, 'utf8').trim() : 'none';
   const isEmpty = services.libraries.list({ limit: 1 }).items.length === 0;
   if (state === 'done' || (state === 'none' && !isEmpty)) return false;

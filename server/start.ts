@@ -6,7 +6,7 @@ import { closeOnSignals, runMain, serve } from './serve.ts';
 
 /** Everything for a first look: builds the client where needed, serves, and fills an empty database. */
 await runMain(async () => {
-  const config = readConfig(process.env);
+  const config = readConfig();
   const say = (text: string) => process.stdout.write(`${text}\n`);
   if (await isClientStale()) {
     say('Building the pages …');

@@ -2,7 +2,7 @@ import { existsSync, renameSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
 import { simpleGit } from 'simple-git';
 import type { RunBase } from '../../shared/schemas/runs.ts';
-import type { Actor } from '../features/actor.ts';
+import type { Actor } from '../actor.ts';
 import type { Services } from '../features/services.ts';
 import { type DemoCommit, demoCommits, writeLarkroots } from './larkroots.ts';
 

@@ -1,5 +1,5 @@
 import type { RequestHandler, Response } from 'express';
-import { type Actor, localActor } from '../features/actor.ts';
+import { type Actor, localActor } from '../actor.ts';
 
 /**
  * Says who makes a request. The server listens to this machine alone, so whoever reaches it is the person

@@ -7,7 +7,7 @@ import { afterAll } from 'vitest';
 import { createApp } from '../../server/app.ts';
 import { type DatabaseClient, openDatabase } from '../../server/db/client.ts';
 import { migrateDatabase } from '../../server/db/migrate.ts';
-import { localActor } from '../../server/features/actor.ts';
+import { localActor } from '../../server/actor.ts';
 import { createServices, type Services, type ServicesOptions } from '../../server/features/services.ts';
 import { recipe } from '../../shared/schemas/builds.ts';
 import type { SolverDeclaration } from '../../shared/schemas/solver.ts';

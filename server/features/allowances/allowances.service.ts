@@ -5,11 +5,11 @@ import type {
   setAllowancesBody,
 } from '../../../shared/schemas/allowance-revisions.ts';
 import type { Page, PageQuery } from '../../../shared/schemas/paging.ts';
+import type { Actor } from '../../actor.ts';
 import { type DatabaseClient, inTransaction } from '../../db/client.ts';
 import { numberCursor, toPage } from '../../db/cursor.ts';
 import type { Clock } from '../../jobs/clock.ts';
 import type { EventBus } from '../../jobs/event-bus.ts';
-import type { Actor } from '../actor.ts';
 import type { AuditService } from '../audit/audit.service.ts';
 import type { LibrariesService } from '../libraries/libraries.service.ts';
 import { presentAllowances, presentDefaultAllowances } from './allowances.present.ts';

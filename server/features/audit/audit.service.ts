@@ -1,10 +1,10 @@
 import { AppError } from '../../../shared/errors.ts';
 import type { AuditAction, AuditDetail, AuditEntryView, AuditQuery } from '../../../shared/schemas/audit.ts';
 import type { Page } from '../../../shared/schemas/paging.ts';
+import type { Actor } from '../../actor.ts';
 import type { Db } from '../../db/client.ts';
 import { numberCursor, toPage } from '../../db/cursor.ts';
 import type { Clock } from '../../jobs/clock.ts';
-import type { Actor } from '../actor.ts';
 import { createLibrariesRepo } from '../libraries/libraries.repo.ts';
 import { presentAuditEntry } from './audit.present.ts';
 import { createAuditRepo } from './audit.repo.ts';

@@ -1,11 +1,11 @@
 import { AppError } from '../../../shared/errors.ts';
 import type { CreateLibraryBody, LibraryView } from '../../../shared/schemas/libraries.ts';
 import type { Page, PageQuery } from '../../../shared/schemas/paging.ts';
+import type { Actor } from '../../actor.ts';
 import { type DatabaseClient, inTransaction } from '../../db/client.ts';
 import { decodeCursor, toPage } from '../../db/cursor.ts';
 import type { Clock } from '../../jobs/clock.ts';
 import type { EventBus } from '../../jobs/event-bus.ts';
-import type { Actor } from '../actor.ts';
 import type { AuditService } from '../audit/audit.service.ts';
 import { presentLibrary } from './libraries.present.ts';
 import { createLibrariesRepo, type LibraryRow } from './libraries.repo.ts';

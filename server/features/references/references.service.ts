@@ -9,11 +9,11 @@ import type {
   referenceQuery,
   SetReferenceBody,
 } from '../../../shared/schemas/references.ts';
+import type { Actor } from '../../actor.ts';
 import { type DatabaseClient, inTransaction } from '../../db/client.ts';
 import { decodeCursor, numberCursor, toPage } from '../../db/cursor.ts';
 import type { Clock } from '../../jobs/clock.ts';
 import type { EventBus } from '../../jobs/event-bus.ts';
-import type { Actor } from '../actor.ts';
 import type { AuditService } from '../audit/audit.service.ts';
 import type { LibrariesService } from '../libraries/libraries.service.ts';
 import type { RunSolves } from '../runs/run-solves.ts';

@@ -10,12 +10,12 @@ import {
   type StartRunBody,
 } from '../../../shared/schemas/runs.ts';
 import type { SolverDeclaration } from '../../../shared/schemas/solver.ts';
+import type { Actor } from '../../actor.ts';
 import { type DatabaseClient, inTransaction } from '../../db/client.ts';
 import { numberCursor, toPage } from '../../db/cursor.ts';
 import type { Clock } from '../../jobs/clock.ts';
 import type { EventBus } from '../../jobs/event-bus.ts';
 import type { Queue } from '../../jobs/queue.ts';
-import type { Actor } from '../actor.ts';
 import type { AuditService } from '../audit/audit.service.ts';
 import type { BuildRow } from '../builds/builds.repo.ts';
 import type { BuildsService } from '../builds/builds.service.ts';

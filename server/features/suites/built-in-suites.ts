@@ -1,7 +1,7 @@
 import { prepareSuite } from '../../../shared/suites/prepare.ts';
 import { readSuiteText } from '../../../shared/suites/read-suite.ts';
+import { localActor } from '../../actor.ts';
 import { builtInSuites, readSuiteFile, storedCertificates } from '../../cli/open-suite.ts';
-import { localActor } from '../actor.ts';
 import type { SuitesService } from './suites.service.ts';
 
 /** Brings the suites that come with the product into the database; a file that has changed is a new revision. */

@@ -1,7 +1,7 @@
 import { writeFileSync } from 'node:fs';
 import path from 'node:path';
 import { describe, expect, it } from 'vitest';
-import { localActor } from '../../../server/features/actor.ts';
+import { localActor } from '../../../server/actor.ts';
 import type { ServerEvent } from '../../../shared/schemas/events.ts';
 import { pathFromFile } from '../../../shared/schemas/path.ts';
 import { makeBuildFolder, openTestApp, seedLibrary } from '../../helpers/app.ts';

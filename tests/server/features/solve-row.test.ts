@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { localActor } from '../../../server/features/actor.ts';
+import { localActor } from '../../../server/actor.ts';
 import { presentSolve } from '../../../server/features/runs/runs.present.ts';
 import { solveToValues, valuesToSolve } from '../../../server/features/runs/solve-row.ts';
 import { createSolvesRepo } from '../../../server/features/runs/solves.repo.ts';
