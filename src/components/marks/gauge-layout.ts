@@ -10,9 +10,14 @@ export interface GaugeLayout {
   isCut: 'left' | 'right' | null;
 }
 
+/** Small allowances stand clear of 0 and large changes still fit: lengths grow with the 0.7th power of the percent. */
+const power = 0.7;
+const bend = (percent: number): number => Math.sign(percent) * Math.abs(percent) ** power;
+
 /**
- * The picture of a verdict to scale, in percent. The scale runs from −25 to +75 % unless a value of the
- * table lies outside: then it is stretched for all rows alike (`least`, `most`), at most −100 … +200 %.
+ * The picture of a verdict to scale, in percent; posts and dot share one scale. It runs from −25 to +75 % unless
+ * a value of the table lies outside: then it is stretched for all rows alike (`least`, `most`), at most
+ * −100 … +200 %.
  */
 export function layOutGauge(
   percent: number,
@@ -23,7 +28,8 @@ export function layOutGauge(
   const pad = 6;
   const low = Math.max(-100, Math.min(-25, range.least * 1.1));
   const high = Math.min(200, Math.max(75, range.most * 1.1));
-  const at = (value: number): number => pad + ((value - low) / (high - low)) * (width - 2 * pad);
+  const at = (value: number): number =>
+    pad + ((bend(value) - bend(low)) / (bend(high) - bend(low))) * (width - 2 * pad);
   const clipped = Math.min(high, Math.max(low, percent));
   return {
     start: pad,

@@ -13,7 +13,7 @@ export interface RichTextProps {
 
 /** Only the digits of a figure are Mono: `41 of 57` becomes two runs with plain words between. */
 function Figure({ text }: { text: string }) {
-  const parts = text.split(/([A-Za-z]{2,}(?:\s+[A-Za-z]{2,})*)/);
+  const parts = text.split(/(\s*[A-Za-z]{2,}(?:\s+[A-Za-z]{2,})*\s*)/);
   return parts.map((part, index) => {
     if (part === '') return null;
     // biome-ignore lint/suspicious/noArrayIndexKey: the pieces of one sentence keep their places

@@ -88,17 +88,17 @@ function resultPieces(run: RunView, solves: readonly SolveView[], counts: Outcom
   const head = [strong(worst.solver), plain(` ${saying(worst.outcome)}`), strong(worst.case)];
   const rest: TextPiece[] =
     others.length === 0
-      ? [plain('; all others are solved or rightly refused: ')]
+      ? [plain('; all others are solved or rightly refused, ')]
       : [
           plain(', and '),
           figure(formatFigure(others.length)),
-          plain(others.length === 1 ? ' more is not solved: ' : ' more are not solved: '),
+          plain(others.length === 1 ? ' more is not solved; ' : ' more are not solved; '),
         ];
   return [
     ...head,
     ...rest,
     figure(`${formatFigure(counts.success)} of ${formatFigure(counts.total)}`),
-    plain(run.status === 'finished' ? '.' : ' of those that were run.'),
+    plain(run.status === 'finished' ? ' are.' : ' of those that were run are.'),
   ];
 }
 

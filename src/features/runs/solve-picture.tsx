@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useMemo } from 'react';
+import { isSuccess } from '../../../shared/numerics/judge-claim.ts';
 import type { SuiteCase } from '../../../shared/schemas/case.ts';
 import type { SolveView } from '../../../shared/schemas/runs.ts';
 import { DigitStrip, stripWidth } from '../../components/digit-strip/digit-strip.tsx';
@@ -27,10 +28,20 @@ export interface SolvePictureCellProps {
   pitch: 10 | 8 | 7;
 }
 
+const isFailure = (solve: SolveView): boolean => !isSuccess(solve) && solve.outcome !== 'not applicable';
+
 /** A strip, or the words that stand for it; an empty place of the same size while it is read. */
 export function SolvePictureCell({ solve, suiteCase, pitch }: SolvePictureCellProps) {
   const picture = useSolvePicture(solve, suiteCase);
   if (picture === undefined) return <span className="block h-5" style={{ width: stripWidth(pitch) }} />;
-  if (picture.kind === 'words') return <span className="text-header text-ink-3">{picture.words}</span>;
+  if (picture.kind === 'words')
+    return (
+      <span
+        className={`min-w-0 truncate text-header ${isFailure(solve) ? 'text-worse' : 'text-ink-3'}`}
+        title={picture.words}
+      >
+        {pitch < 10 ? picture.words.replace('no root here; ', '') : picture.words}
+      </span>
+    );
   return <DigitStrip strip={picture.strip} counts={picture.counts} pitch={pitch} />;
 }

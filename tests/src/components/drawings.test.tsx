@@ -71,13 +71,19 @@ describe('verdict signs', () => {
 });
 
 describe('gauge', () => {
-  it('draws posts at the allowance and the dot at the change, to one scale', () => {
+  it('draws posts and dot to one scale, on which lengths grow with the 0.7th power of the percent', () => {
     const layout = layOutGauge(20, 10, 212);
-    // 200 px for −25 … +75 %: 2 px a percent.
-    expect(layout.zero).toBe(56);
-    expect(layout.posts).toEqual([36, 76]);
-    expect(layout.dot).toBe(96);
+    const [left, right] = layout.posts ?? [Number.NaN, Number.NaN];
+    expect(layout.zero - left).toBeCloseTo(right - layout.zero, 10);
+    expect((layout.dot - layout.zero) / (right - layout.zero)).toBeCloseTo(2 ** 0.7, 10);
+    expect(layOutGauge(75, 10, 212).dot).toBeCloseTo(206, 10);
+    expect(layOutGauge(-25, 10, 212).dot).toBeCloseTo(6, 10);
     expect(layout.isCut).toBeNull();
+  });
+
+  it('sets a dot exactly at the allowance on its post', () => {
+    const layout = layOutGauge(2, 2, 184);
+    expect(layout.dot).toBe(layout.posts?.[1]);
   });
 
   it('stretches its scale for all rows alike and says where a dot was cut', () => {

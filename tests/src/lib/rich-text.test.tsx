@@ -12,7 +12,7 @@ const pieces = [
 describe('RichText', () => {
   it('sets names in 600 and only the digits of a figure in Mono', () => {
     expect(renderToStaticMarkup(<RichText pieces={pieces} />)).toBe(
-      '<b>secant</b> needs <span class="num">12 </span>of<span class="num"> 57</span> evaluations.',
+      '<b>secant</b> needs <span class="num">12</span> of <span class="num">57</span> evaluations.',
     );
   });
 

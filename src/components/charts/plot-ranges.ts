@@ -8,13 +8,9 @@ export interface Range {
 export function xRange(
   bracket: readonly [number, number] | null,
   asked: readonly number[],
-  root: number | null,
+  roots: readonly number[],
 ): Range {
-  const wanted = [
-    ...(bracket ?? []),
-    ...asked.filter(Number.isFinite).slice(0, 8),
-    ...(root === null ? [] : [root]),
-  ];
+  const wanted = [...(bracket ?? []), ...asked.filter(Number.isFinite).slice(0, 8), ...roots];
   if (wanted.length === 0) return { low: -1, high: 1 };
   const [low, high] = [Math.min(...wanted), Math.max(...wanted)];
   const pad = (high - low) * 0.04 || Math.max(1e-3, Math.abs(low) * 0.1);
@@ -45,4 +41,12 @@ export function niceTicks({ low, high }: Range, count = 4): number[] {
     const value = (first + index) * step;
     return Number(value.toPrecision(12));
   });
+}
+
+/** A round number at an axis, with a true minus; very large and very small ones with an exponent. */
+export function tickText(value: number): string {
+  const size = Math.abs(value);
+  const text =
+    size !== 0 && (size >= 1e5 || size < 1e-4) ? value.toExponential().replace('e+', 'e') : String(value);
+  return text.replaceAll('-', '−');
 }

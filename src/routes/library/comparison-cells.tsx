@@ -1,0 +1,46 @@
+import { useQuery } from '@tanstack/react-query';
+import { Link } from 'react-router';
+import { gravity } from '../../../shared/comparison/change.ts';
+import { ChangeWord } from '../../components/marks/change-word.tsx';
+import { VerdictWord } from '../../components/marks/verdict-word.tsx';
+import { comparisonQuery } from '../../features/comparisons/comparisons.queries.ts';
+import { paths } from '../../paths.ts';
+
+export interface ComparisonCellProps {
+  /** Newest finished run of the build, and of the build before; null where there is none. */
+  run: number | null;
+  before: number | null;
+}
+
+function useCell({ run, before }: ComparisonCellProps) {
+  return useQuery({
+    ...comparisonQuery(run ?? 0, { kind: 'run', run: before ?? 0 }),
+    enabled: run !== null && before !== null,
+  });
+}
+
+/** What changed against the build before, in counts, gravest first. */
+export function ChangesCell(props: ComparisonCellProps) {
+  const query = useCell(props);
+  const { run, before } = props;
+  if (run === null) return <span className="text-ink-3">not run on this suite</span>;
+  if (before === null) return <span className="text-ink-3">the first build</span>;
+  if (query.isError) return <span className="text-worse">{query.error.message}</span>;
+  if (query.data === undefined) return <span className="text-ink-3">…</span>;
+  const { changes } = query.data;
+  const isSame = Object.keys(changes).every((change) => change === 'same');
+  return (
+    <Link to={paths.comparison(run, `run:${before}`)} className="flex flex-wrap gap-x-4 no-underline">
+      {gravity
+        .filter((change) => changes[change] !== undefined && (isSame || change !== 'same'))
+        .map((change) => (
+          <ChangeWord key={change} change={change} count={changes[change] ?? 0} />
+        ))}
+    </Link>
+  );
+}
+
+export function VerdictCell(props: ComparisonCellProps) {
+  const query = useCell(props);
+  return query.data === undefined ? null : <VerdictWord verdict={query.data.verdict} isShort />;
+}

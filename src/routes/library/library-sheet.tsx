@@ -1,0 +1,250 @@
+import { useQuery } from '@tanstack/react-query';
+import { useState } from 'react';
+import { useNavigate } from 'react-router';
+import { gravity } from '../../../shared/comparison/change.ts';
+import type { AllowanceRevisionView } from '../../../shared/schemas/allowance-revisions.ts';
+import type { BuildView } from '../../../shared/schemas/builds.ts';
+import type { LibraryView, SolverView } from '../../../shared/schemas/libraries.ts';
+import type { RunView } from '../../../shared/schemas/runs.ts';
+import { ChangeWord } from '../../components/marks/change-word.tsx';
+import { VerdictSign, verdictColour } from '../../components/marks/verdict-sign.tsx';
+import { Entry } from '../../components/sheet/entry.tsx';
+import { Page } from '../../components/sheet/page.tsx';
+import { VerdictBlock } from '../../components/sheet/verdict-block.tsx';
+import { Button } from '../../components/ui/button.tsx';
+import { FilterWord } from '../../components/ui/filter-word.tsx';
+import { RichText } from '../../components/ui/rich-text.tsx';
+import { StateNote } from '../../components/ui/state-note.tsx';
+import { BuildsTable } from '../../features/builds/builds-table.tsx';
+import { RegisterForm } from '../../features/builds/register-form.tsx';
+import { comparisonQuery } from '../../features/comparisons/comparisons.queries.ts';
+import { allowanceLines, exceptionLines } from '../../lib/allowance-words.ts';
+import { formatCommit, formatDate, formatFigure } from '../../lib/format.ts';
+import { moveRowFocus } from '../../lib/row-focus.ts';
+import { useKeys } from '../../lib/use-keys.ts';
+import { useViewState } from '../../lib/use-view-state.ts';
+import { paths } from '../../paths.ts';
+import { ChangesCell, VerdictCell } from './comparison-cells.tsx';
+import { libraryPieces } from './library-sentence.ts';
+import { newestRuns } from './newest-runs.ts';
+import { SolverTrends } from './solver-trends.tsx';
+
+export interface LibrarySheetProps {
+  library: LibraryView;
+  builds: BuildView[];
+  runs: RunView[];
+  solvers: SolverView[];
+  allowances: AllowanceRevisionView;
+}
+
+const shownBuilds = 8;
+
+function focusedBuild(): number | null {
+  const { activeElement } = document;
+  return activeElement instanceof HTMLElement ? Number(activeElement.dataset.build) || null : null;
+}
+
+/** A library: how it stands, its solvers over the builds, its builds, its allowances. */
+export function LibrarySheet({ library, builds, runs, solvers, allowances }: LibrarySheetProps) {
+  const view = useViewState();
+  const navigate = useNavigate();
+  const [isRegistering, setIsRegistering] = useState(false);
+  const suites = [...new Set(runs.map((run) => run.suite.slug))];
+  const suite = view.get('suite') || suites[0] || '';
+  const runOf = newestRuns(runs, suite);
+  const withRun = builds.filter((build) => runOf.has(build.id));
+  const shown = withRun
+    .slice(0, shownBuilds)
+    .toReversed()
+    .flatMap((build) => {
+      const run = runOf.get(build.id);
+      return run === undefined ? [] : [{ build, run }];
+    });
+  const idOf = (build: BuildView | undefined): number | null =>
+    build === undefined ? null : (runOf.get(build.id)?.id ?? null);
+  const beforeOf = (build: BuildView): number | null => idOf(withRun[withRun.indexOf(build) + 1]);
+  const [newest] = withRun;
+  const newestRun = idOf(newest);
+  const newestBefore = newest === undefined ? null : beforeOf(newest);
+  const comparison = useQuery({
+    ...comparisonQuery(newestRun ?? 0, { kind: 'run', run: newestBefore ?? 0 }),
+    enabled: newestRun !== null && newestBefore !== null,
+  });
+  const chosen = view
+    .list('chosen')
+    .map(Number)
+    .filter((id) => builds.some((build) => build.id === id));
+  const toggle = (id: number): void => {
+    const next = chosen.includes(id) ? chosen.filter((other) => other !== id) : [...chosen, id].slice(-2);
+    view.set({ chosen: next.map(String) });
+  };
+  const pair = builds.filter((build) => chosen.includes(build.id));
+  const [candidate, reference] = [idOf(pair[0]), idOf(pair[1])];
+  const canCompare = candidate !== null && reference !== null;
+  const compare = (): void => {
+    if (canCompare) void navigate(paths.comparison(candidate, `run:${reference}`));
+  };
+  useKeys({
+    j: () => moveRowFocus(1),
+    k: () => moveRowFocus(-1),
+    ' ': () => {
+      const id = focusedBuild();
+      if (id !== null) toggle(id);
+    },
+    m: compare,
+    r: () => setIsRegistering(true),
+  });
+  const lines = [...allowanceLines(allowances.allowances.base), ...exceptionLines(allowances.allowances)];
+  const stand = comparison.data;
+  const { overall } = stand ?? {};
+  return (
+    <Page
+      title={library.name}
+      trail={[{ label: 'Libraries', to: paths.libraries() }, { label: library.name }]}
+      keys={[
+        { keys: ['j', 'k'], does: 'next, previous build' },
+        { keys: ['enter'], does: 'open the build' },
+        { keys: ['space'], does: 'choose for a comparison' },
+        { keys: ['m'], does: 'compare the two chosen' },
+        { keys: ['r'], does: 'register a build' },
+      ]}
+    >
+      <VerdictBlock
+        sign={
+          stand === undefined ? (
+            library.name
+          ) : (
+            <>
+              <VerdictSign verdict={stand.verdict} isPlain /> {stand.verdict}
+            </>
+          )
+        }
+        colour={stand === undefined ? 'text-ink' : verdictColour[stand.verdict]}
+        note={
+          <>
+            {library.homepage !== null && (
+              <p>
+                Source: <a href={library.homepage}>{library.homepage.replace(/^https?:\/\//, '')}</a>
+              </p>
+            )}
+            {library.description !== '' && <p>{library.description}</p>}
+          </>
+        }
+        sentence={
+          <RichText
+            pieces={libraryPieces({
+              buildCount: builds.length,
+              newest: newest === undefined ? null : formatCommit(newest.commit ?? newest.label),
+              suite,
+              comparison: newestBefore === null ? null : stand,
+              solved: overall?.candidate.solved ?? null,
+              of: overall?.candidate.of ?? null,
+            })}
+          />
+        }
+        lead={
+          newest === undefined ? undefined : (
+            <>
+              {newest.label}.{' '}
+              {stand !== undefined && (
+                <span className="inline-flex flex-wrap gap-x-4">
+                  {gravity
+                    .filter((change) => change !== 'same' && stand.changes[change] !== undefined)
+                    .map((change) => (
+                      <ChangeWord key={change} change={change} count={stand.changes[change] ?? 0} />
+                    ))}
+                </span>
+              )}
+            </>
+          )
+        }
+        actions={
+          <>
+            <Button isMain={builds.length === 0} hotkey="r" onClick={() => setIsRegistering(true)}>
+              Register a build
+            </Button>
+            {builds.length > 1 && (
+              <>
+                <Button isMain={canCompare} hotkey="m" disabled={!canCompare} onClick={compare}>
+                  Compare two builds
+                </Button>
+                {!canCompare && (
+                  <span className="text-note text-ink-3">
+                    {pair.length < 2
+                      ? 'Choose two in the list below.'
+                      : `Both must have a finished run on ${suite}.`}
+                  </span>
+                )}
+              </>
+            )}
+          </>
+        }
+      >
+        {isRegistering && (
+          <RegisterForm
+            library={library.slug}
+            onDone={(build) => void navigate(paths.build(build.id))}
+            onClose={() => setIsRegistering(false)}
+          />
+        )}
+        {suites.length > 1 && (
+          <div className="no-print mt-3 flex flex-wrap items-center gap-x-3.5">
+            <span className="text-note text-ink-3">suite</span>
+            {suites.map((name) => (
+              <FilterWord
+                key={name}
+                word={name}
+                isPressed={name === suite}
+                onPress={() => view.set({ suite: name === suites[0] ? '' : name })}
+              />
+            ))}
+          </div>
+        )}
+      </VerdictBlock>
+      {builds.length > 0 && <SolverTrends shown={shown} solvers={solvers} suite={suite} />}
+      <Entry title="Builds" note="Newest first. Choose two to compare them.">
+        {builds.length === 0 ? (
+          <StateNote title="No build yet">
+            Register a folder of this machine that holds a prepared checkout. Tallyroot reads its{' '}
+            <code>tallyroot.yaml</code> and shows what it will run before it runs.
+          </StateNote>
+        ) : (
+          <BuildsTable
+            builds={builds}
+            buildHref={(build) => paths.build(build.id)}
+            chosen={chosen}
+            onChoose={(build) => toggle(build.id)}
+            renderSolved={(build) => {
+              const run = runOf.get(build.id);
+              return run === undefined ? '–' : formatFigure(run.progress.solved);
+            }}
+            renderChanges={(build) => <ChangesCell run={idOf(build)} before={beforeOf(build)} />}
+            renderVerdict={(build) => <VerdictCell run={idOf(build)} before={beforeOf(build)} />}
+          />
+        )}
+      </Entry>
+      <Entry
+        title="Allowances"
+        note={
+          allowances.createdAt === null ? (
+            <p>The product’s own, until the library sets its own.</p>
+          ) : (
+            <p>
+              Revision {allowances.number}, by {allowances.createdBy}, {formatDate(allowances.createdAt)}: “
+              {allowances.reason}”
+            </p>
+          )
+        }
+      >
+        <ul className="finds">
+          {lines.map((line) => (
+            <li key={line.term}>
+              <b className="font-medium">{line.term}</b>
+              <span>{line.text}</span>
+            </li>
+          ))}
+        </ul>
+      </Entry>
+    </Page>
+  );
+}
