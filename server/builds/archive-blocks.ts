@@ -1,13 +1,15 @@
-import { refuseWhole } from './archive-names.ts';
+import { type Origin, refuseWhole } from './archive-names.ts';
 
 export const BLOCK_BYTES = 512;
 
 /** Takes a stream apart into stretches of given length. */
 export class BlockReader {
   readonly #source: AsyncIterator<Buffer>;
+  readonly #origin: Origin;
   #held: Buffer = Buffer.alloc(0);
 
-  constructor(chunks: AsyncIterable<Buffer>) {
+  constructor(chunks: AsyncIterable<Buffer>, origin: Origin = 'archive') {
+    this.#origin = origin;
     this.#source = chunks[Symbol.asyncIterator]();
   }
 
@@ -16,7 +18,7 @@ export class BlockReader {
     while (this.#held.length < count) {
       const next = await this.#source.next();
       if (next.done === true) {
-        if (this.#held.length > 0) throw refuseWhole('archive', 'it is cut short');
+        if (this.#held.length > 0) throw refuseWhole(this.#origin, 'it is cut short');
         return null;
       }
       this.#held = this.#held.length === 0 ? next.value : Buffer.concat([this.#held, next.value]);
@@ -26,13 +28,13 @@ export class BlockReader {
     return taken;
   }
 
-  /** So many bytes as they come, and then the padding to a whole block. */
-  async *body(count: number): AsyncGenerator<Buffer> {
+  /** So many bytes as they come. */
+  async *stretch(count: number): AsyncGenerator<Buffer> {
     let left = count;
     while (left > 0) {
       if (this.#held.length === 0) {
         const next = await this.#source.next();
-        if (next.done === true) throw refuseWhole('archive', 'it is cut short');
+        if (next.done === true) throw refuseWhole(this.#origin, 'it is cut short');
         this.#held = next.value;
       }
       const chunk = this.#held.subarray(0, left);
@@ -40,8 +42,14 @@ export class BlockReader {
       left -= chunk.length;
       yield chunk;
     }
+  }
+
+  /** So many bytes as they come, and then the padding to a whole block. */
+  async *body(count: number): AsyncGenerator<Buffer> {
+    yield* this.stretch(count);
     const padding = (BLOCK_BYTES - (count % BLOCK_BYTES)) % BLOCK_BYTES;
-    if (padding > 0 && (await this.take(padding)) === null) throw refuseWhole('archive', 'it is cut short');
+    if (padding > 0 && (await this.take(padding)) === null)
+      throw refuseWhole(this.#origin, 'it is cut short');
   }
 
   /** Whatever is left. */

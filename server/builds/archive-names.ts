@@ -51,13 +51,13 @@ export function decodeName(bytes: Uint8Array): string | null {
 }
 
 /** Two names that some file system takes for one fold to the same text. */
-function fold(segment: string): string {
+export function foldName(segment: string): string {
   return segment.normalize('NFD').toUpperCase().toLowerCase().normalize('NFC');
 }
 
 /** Git would take such a folder for a repository and obey its configuration, which can name programs. */
 function isGitFolder(segment: string): boolean {
-  const bare = fold(segment).replace(/\p{Default_Ignorable_Code_Point}/gu, '');
+  const bare = foldName(segment).replace(/\p{Default_Ignorable_Code_Point}/gu, '');
   return bare === '.git' || bare === 'git~1';
 }
 
@@ -116,7 +116,7 @@ export class EntryTree {
       const fault = faultOf(segment);
       if (fault !== null) throw this.#refuse(name, fault);
       spelled = index === 0 ? segment : `${spelled}/${segment}`;
-      key = `${key}/${fold(segment)}`;
+      key = `${key}/${foldName(segment)}`;
       const isLast = index === segments.length - 1;
       this.#place(key, { path: spelled, kind: isLast ? kind : 'folder', isDeclared: isLast }, name);
     }
