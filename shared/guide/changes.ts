@@ -70,6 +70,28 @@ export const changesChapter: Chapter = {
         ),
       ],
     },
+    {
+      id: 'exports',
+      title: 'Taking a comparison with you',
+      blocks: [
+        table(
+          'Exports of a comparison',
+          ['format', 'holds'],
+          [
+            ['CSV', 'one row a pair, units in the header, empty where nothing is known'],
+            ['JSON', 'everything but the paths, with the allowances that it was judged by'],
+            ['Markdown', 'the sentence, the totals and the ten gravest changes'],
+            [
+              'JUnit XML',
+              'a testsuite a solver, a testcase a pair; a failure where the pair is part of a breach, an error where the candidate has no result',
+            ],
+          ],
+        ),
+        paragraph(
+          'Programs for tables take a cell that begins with =, +, -, @ or a tab for a formula. In CSV a name that begins so, or with an apostrophe, has an apostrophe put before it: take one off to have the name back. Plain numbers such as -3 stay as they are.',
+        ),
+      ],
+    },
   ],
   see: ['allowances', 'order', 'accuracy', 'fingerprint'],
 };

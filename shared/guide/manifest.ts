@@ -40,7 +40,7 @@ export const manifestSolverKeys: Record<keyof ManifestSolver, KeyEntry> = {
   takes: [
     '`bracket`, `start`, `both` or `point`, or a list such as `[bracket, start]`',
     'needed',
-    'what it is given; `point` is for systems',
+    'what it is given; `point` is for systems, which no suite holds yet: such a solver is not applicable',
   ],
   starts: ['a whole number from 1 to 16', '1, where it takes a start', 'how many starts it takes'],
   uses: ['a list of `f`, `df`, `d2f`, `jac`', '`[f]`', 'the evaluations that it may ask for'],

@@ -50,6 +50,15 @@ export const wireChapter: Chapter = {
       ],
     },
     {
+      id: 'not-sent',
+      title: 'What is not sent yet',
+      blocks: [
+        paragraph(
+          'Suites hold single equations, answered in binary64. `point` and `digits` belong to this version of the wire but are not sent: a solver that takes a point, or uses a Jacobian, is not applicable to any case.',
+        ),
+      ],
+    },
+    {
       id: 'from-adapter',
       title: 'What an adapter writes',
       blocks: [
@@ -140,10 +149,10 @@ fail 7 too many steps
           ['from', 'to', 'limit'],
           [
             ['start', '`ready`', '20 s'],
-            ['`go`', 'end line', '60 s; each site and each suite can set it'],
+            ['`go`', 'end line', 'what the suite says under `seconds`, 10 s where it says nothing'],
             ['`stop`', 'end line', '2 s of grace'],
             ['`close`', 'exit', '5 s'],
-            ['`go`', 'end line', 'at most 10 × allow + 1000 lines that ask for nothing'],
+            ['`go`', 'end line', 'besides: at most 10 × allow + 1000 lines that ask for nothing'],
           ],
         ),
         paragraph(
