@@ -15,7 +15,13 @@ export function staticSite(folder: string): RequestHandler[] {
     const isReading = request.method === 'GET' || request.method === 'HEAD';
     const isFile = request.path.startsWith('/assets/');
     if (!isReading || isFile || !request.accepts('html')) next();
-    else response.set('Cache-Control', 'no-cache').sendFile(path.join(folder, 'index.html'), next);
+    else {
+      response.set('Cache-Control', 'no-cache');
+      response.sendFile(path.join(folder, 'index.html'), (error) => {
+        // Called on success as well, when nothing may follow.
+        if (error) next(error);
+      });
+    }
   };
   return [files, page];
 }

@@ -58,6 +58,11 @@ describe('staticSite', () => {
     writeFileSync(path.join(dist, 'assets', 'main-1a2b.js'), 'let a;');
     const app = express();
     for (const handler of staticSite(dist)) app.use(handler);
+    const passedOn: string[] = [];
+    app.use((passed, response) => {
+      passedOn.push(passed.originalUrl);
+      response.status(404).end();
+    });
     const deep = await request(app).get('/libraries/x/runs/3').set('Accept', 'text/html').expect(200);
     expect(deep.text).toBe('<title>the page</title>');
     expect(deep.headers['cache-control']).toBe('no-cache');
@@ -65,6 +70,7 @@ describe('staticSite', () => {
     expect(file.headers['cache-control']).toMatch(/immutable/);
     await request(app).get('/assets/gone.js').expect(404);
     await request(app).post('/libraries/x').set('Accept', 'text/html').expect(404);
+    expect(passedOn).toEqual(['/assets/gone.js', '/libraries/x']);
     await request(app).get('/..%2fpackage.json').set('Accept', 'application/json').expect(404);
   });
 });
