@@ -8,7 +8,7 @@ export interface Breach {
   rule: string;
 }
 
-const sharedPackages = /^(zod|decimal\.js|mathjs|yaml|@stdlib\/[a-z0-9-]+)$/;
+const sharedPackages = /^(zod|decimal\.js|mathjs(\/number)?|yaml|@stdlib\/[a-z0-9-]+)$/;
 const importPattern =
   /(?:^|\n)\s*(?:import|export)\s(?:[^'"`;]*?\sfrom\s)?['"]([^'"]+)['"]|import\(\s*['"]([^'"]+)['"]\s*\)/g;
 
