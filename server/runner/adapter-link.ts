@@ -45,6 +45,18 @@ export class AdapterLink {
     }
   }
 
+  /** The quickest way for one short line of ASCII, which a pipe takes whole. False where nobody reads any more. */
+  writeAnswer(text: string): boolean {
+    try {
+      const count = writeSync(this.#pipes.write, text);
+      return count >= text.length || this.write(text.slice(count));
+    } catch (error) {
+      if (!hasCode(error, 'EPIPE')) throw error;
+      this.#isBroken = true;
+      return false;
+    }
+  }
+
   /** The next line; waits for it. null at the end of the output, or when the process has ended. */
   next(): WireEvent | null {
     for (;;) {
@@ -97,20 +109,23 @@ export class AdapterLink {
     }
   }
 
+  /** Where the next read is from. */
+  #from = 0;
+  readonly #readInto = (buffer: Buffer, offset: number, length: number): number => {
+    const got = readSync(this.#from, buffer, offset, length, null);
+    if (!this.#state.hasEnded()) return got;
+    // The token comes behind everything that the process itself has written.
+    const at = buffer.subarray(offset, offset + got).indexOf(this.#wakeToken);
+    if (at !== -1) this.#hasReadAll = true;
+    return at === -1 ? got : at;
+  };
+
   /** Bytes put in; 0 at the end of the output, -1 where there is nothing to read yet. */
   #fill(from: number): number {
-    let isTokenFound = false;
     try {
-      const count = this.#reader.fill((buffer, offset, length) => {
-        const got = readSync(from, buffer, offset, length, null);
-        // The token comes behind everything that the process itself has written.
-        if (!this.#state.hasEnded()) return got;
-        const at = buffer.subarray(offset, offset + got).indexOf(this.#wakeToken);
-        isTokenFound = at !== -1;
-        return isTokenFound ? at : got;
-      });
-      if (isTokenFound) this.#hasReadAll = true;
-      return isTokenFound ? Math.max(count, 1) : count;
+      this.#from = from;
+      const count = this.#reader.fill(this.#readInto);
+      return this.#hasReadAll ? Math.max(count, 1) : count;
     } catch (error) {
       if (hasCode(error, 'EAGAIN')) return -1;
       throw error;

@@ -91,6 +91,8 @@ export class SolveSession {
   #steps = 0;
   #otherLines = 0;
   #iterations: number | null = null;
+  /** Whether the line that broke the wire was a second end line of the solve before. */
+  #isLateEnd = false;
 
   constructor(
     link: AdapterLink,
@@ -130,7 +132,7 @@ export class SolveSession {
     const end = this.#serve();
     const wasInTime = this.#state.disarm();
     const raw: RawSolve = {
-      end: wasInTime || end === null ? (end ?? { kind: 'crashed' }) : { kind: 'timed out' },
+      end: wasInTime ? (end ?? { kind: 'crashed' }) : { kind: 'timed out' },
       f: this.#f,
       df: this.#df,
       d2f: this.#d2f,
@@ -138,7 +140,6 @@ export class SolveSession {
       steps: this.#steps,
       elapsedMs: performance.now() - startedAt,
     };
-    if (!wasInTime) raw.end = { kind: 'timed out' };
     return this.#conclude(raw, end, isFirst, text, limits);
   }
 
@@ -167,8 +168,6 @@ export class SolveSession {
     }
     return { kind: 'done', raw, isUsable, endHow: this.#link.isAtEnd() ? 'end of file' : 'kill' };
   }
-
-  #isLateEnd = false;
 
   /** Answers until something ends the solve; null where the adapter's output or process ended. */
   #serve(): SolveEnd | null {
@@ -207,14 +206,14 @@ export class SolveSession {
     if (what === 'fdf') {
       const y = this.#evaluator.f(x);
       const dy = this.#evaluator.df(x);
-      this.#link.write(encodePairAnswer(y, dy));
+      this.#link.writeAnswer(encodePairAnswer(y, dy));
       this.#f += 1;
       this.#df += 1;
       this.#path.add('fdf', x, y, dy);
       return null;
     }
     const y = this.#evaluator[what](x);
-    this.#link.write(encodeAnswer(y));
+    this.#link.writeAnswer(encodeAnswer(y));
     if (what === 'f') this.#f += 1;
     else if (what === 'df') this.#df += 1;
     else this.#d2f += 1;

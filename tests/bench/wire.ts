@@ -97,6 +97,11 @@ export async function benchWire(): Promise<WireBench> {
     const laneNode: number[] = [];
     const runC: number[] = [];
     const runNode: number[] = [];
+    // Until the lane's code is compiled; a server is measured by its second hour, not by its first second.
+    for (let round = 0; round < 2; round += 1) {
+      await roundTrip(adapterC, 'spin');
+      await wholeRun(adapterC, cases);
+    }
     let size = await wholeRun(adapterC, cases);
     for (let round = 0; round < ROUNDS; round += 1) {
       bare.push(Number(execFileSync(join(folder, 'ping-pong'), [String(SPINS)], { encoding: 'utf8' })));
