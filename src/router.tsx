@@ -66,6 +66,7 @@ export function createRouter() {
     {
       path: '/',
       element: <ShellRoute />,
+      errorElement: <FaultPage />,
       hydrateFallbackElement: <div className="sheet" />,
       children: pages,
     },

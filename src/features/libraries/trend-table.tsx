@@ -53,7 +53,7 @@ export function TrendTable({ series, labels, solvers }: TrendTableProps) {
                 <th scope="row" className="all-columns">
                   {one.solver}
                   {solver !== undefined && (
-                    <span className="block text-header text-ink-3">{solverWords(solver)}</span>
+                    <span className="block text-header font-normal text-ink-3">{solverWords(solver)}</span>
                   )}
                 </th>
                 <td className="all-columns" data-label="evaluations">

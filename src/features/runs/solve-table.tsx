@@ -31,14 +31,21 @@ export interface SolveTableProps {
 
 const countWidth = 34;
 
+const stackedLabel = 86;
+const stackedBelow = 720;
+
+/** px a digit: as wide as the columns allow; where rows are stacked each strip has the whole width. */
 export function pitchFor(width: number, columns: number): 10 | 8 | 7 {
-  const room = width / Math.max(1, columns) - countWidth;
+  const column = width < stackedBelow ? width - stackedLabel : width / Math.max(1, columns);
+  const room = column - countWidth;
   return room >= 196 ? 10 : room >= 164 ? 8 : 7;
 }
 
 /** How many solvers stand side by side in a width at the narrowest pitch; all of them where rows are stacked. */
 export function solversThatFit(width: number): number {
-  return width < 640 ? Number.POSITIVE_INFINITY : Math.max(1, Math.floor(width / (148 + countWidth)));
+  return width < stackedBelow
+    ? Number.POSITIVE_INFINITY
+    : Math.max(1, Math.floor(width / (148 + countWidth)));
 }
 
 function sortValue(row: MatrixRow, solver: string): number {
@@ -132,7 +139,11 @@ export function SolveTable(props: SolveTableProps) {
                     props.outcomes.length > 0 &&
                     !props.outcomes.includes(outcomeWord(solve));
                   return (
-                    <td key={solver} data-label={solver}>
+                    <td
+                      key={solver}
+                      data-label={solver}
+                      className={solve === undefined && !props.isRunning ? 'not-narrow' : undefined}
+                    >
                       {solve === undefined ? (
                         <span className="text-header text-ink-3">
                           {props.isRunning && row.part === 0 ? '· waiting' : ''}

@@ -1,6 +1,7 @@
-import { type FormEvent, useState } from 'react';
+import { type FormEvent, useRef, useState } from 'react';
 import type { RunView } from '../../../shared/schemas/runs.ts';
 import { Button } from '../../components/ui/button.tsx';
+import { useKeys } from '../../lib/use-keys.ts';
 import { useStartRun } from './runs.queries.ts';
 
 export interface StartRunFormProps {
@@ -12,13 +13,15 @@ export interface StartRunFormProps {
 /** Chooses a suite and runs the build on it. */
 export function StartRunForm({ build, suites, onStarted }: StartRunFormProps) {
   const start = useStartRun();
+  const form = useRef<HTMLFormElement>(null);
+  useKeys({ r: () => form.current?.requestSubmit() });
   const [suite, setSuite] = useState(suites[0]?.slug ?? '');
   function handleSubmit(event: FormEvent): void {
     event.preventDefault();
     start.mutate({ build, suite }, { onSuccess: onStarted });
   }
   return (
-    <form onSubmit={handleSubmit} className="contents">
+    <form ref={form} onSubmit={handleSubmit} className="contents">
       <label className="inline-flex items-center gap-2">
         <span className="text-table text-ink-2">suite</span>
         <select

@@ -1,4 +1,4 @@
-import { CartesianGrid, Label, Line, LineChart, ReferenceLine, XAxis, YAxis } from 'recharts';
+import { CartesianGrid, Label, Line, LineChart, ReferenceDot, ReferenceLine, XAxis, YAxis } from 'recharts';
 import { formatDigits } from '../../lib/format.ts';
 import { useWidth } from '../../lib/use-width.ts';
 import type { SolveSide } from './solve-side.ts';
@@ -37,6 +37,12 @@ function Square({ cx = 0, cy = 0 }: DotProps) {
   return <rect x={cx - 2.8} y={cy - 2.8} width={5.6} height={5.6} fill="var(--ink)" />;
 }
 
+/** Every fifth evaluation, or every tenth, twentieth … where there are many. */
+function fives(most: number): number[] {
+  const step = [5, 10, 20, 50, 100, 200, 500].find((size) => most / size <= 9) ?? 1000;
+  return Array.from({ length: Math.floor(most / step) }, (_, index) => (index + 1) * step);
+}
+
 const axisText = { fill: 'var(--ink-3)', fontFamily: 'var(--mono)', fontSize: 11 };
 
 /** Correct digits after each evaluation: reference as rings, candidate as squares, named at their ends. */
@@ -52,19 +58,32 @@ export function ErrorPlot({ reference, candidate, attainable }: ErrorPlotProps) 
       : `Reference reaches ${formatDigits(before.at(-1)?.reference)} digits with ${before.at(-1)?.number ?? 0} evaluations. `,
     `${reference === null ? 'It' : 'Candidate'} reaches ${formatDigits(after.at(-1)?.candidate)} digits with ${after.at(-1)?.number ?? 0}.`,
   ].join('');
-  const endLabel = (text: string, points: Point[], fill: string) => (
-    <ReferenceLine
-      x={points.at(-1)?.number ?? 0}
-      stroke="none"
-      label={<Label value={text} position="insideTopRight" fill={fill} fontSize={12} offset={8} />}
-    />
-  );
+  // The one that needs more evaluations lies to the right, so its name stands there.
+  const candidateSide = (after.at(-1)?.number ?? 0) >= (before.at(-1)?.number ?? 0) ? 'right' : 'left';
+  const ticks = [1, ...fives(most)];
+  const name = (text: string, points: Point[], key: 'reference' | 'candidate', side: 'left' | 'right') => {
+    const point = points.find((one) => (one[key] ?? 0) >= 6) ?? points.at(-1);
+    return (
+      <ReferenceDot
+        x={point?.number ?? 1}
+        y={point?.[key] ?? 0}
+        r={0}
+        label={{
+          value: text,
+          position: side,
+          offset: 10,
+          fill: key === 'reference' ? 'var(--ref)' : 'var(--ink)',
+          fontSize: 12,
+        }}
+      />
+    );
+  };
   return (
     <div ref={box} role="img" aria-label={`Correct digits after each evaluation. ${said}`}>
       <LineChart
         width={width}
         height={300}
-        margin={{ top: 18, right: 30, bottom: 26, left: 0 }}
+        margin={{ top: 18, right: 36, bottom: 26, left: 0 }}
         accessibilityLayer={false}
       >
         <CartesianGrid vertical={false} stroke="var(--rule)" />
@@ -72,6 +91,7 @@ export function ErrorPlot({ reference, candidate, attainable }: ErrorPlotProps) 
           dataKey="number"
           type="number"
           domain={[1, most]}
+          ticks={ticks}
           allowDecimals={false}
           tickLine={false}
           stroke="var(--rule-strong)"
@@ -130,8 +150,15 @@ export function ErrorPlot({ reference, candidate, attainable }: ErrorPlotProps) 
           activeDot={false}
           isAnimationActive={false}
         />
-        {reference !== null && endLabel(`reference, ${reference.solve.evaluations}`, before, 'var(--ref)')}
-        {reference !== null && endLabel(`candidate, ${candidate.solve.evaluations}`, after, 'var(--ink)')}
+        {reference !== null &&
+          name(
+            `reference, ${reference.solve.evaluations}`,
+            before,
+            'reference',
+            candidateSide === 'right' ? 'left' : 'right',
+          )}
+        {reference !== null &&
+          name(`candidate, ${candidate.solve.evaluations}`, after, 'candidate', candidateSide)}
       </LineChart>
       {again.length > 0 && (
         <p className="text-note text-worse">

@@ -4,6 +4,7 @@ import { gravity } from '../../../shared/comparison/change.ts';
 import { ChangeWord } from '../../components/marks/change-word.tsx';
 import { VerdictWord } from '../../components/marks/verdict-word.tsx';
 import { comparisonQuery } from '../../features/comparisons/comparisons.queries.ts';
+import { formatFigure } from '../../lib/format.ts';
 import { paths } from '../../paths.ts';
 
 export interface ComparisonCellProps {
@@ -43,4 +44,22 @@ export function ChangesCell(props: ComparisonCellProps) {
 export function VerdictCell(props: ComparisonCellProps) {
   const query = useCell(props);
   return query.data === undefined ? null : <VerdictWord verdict={query.data.verdict} isShort />;
+}
+
+export interface SolvedCellProps extends ComparisonCellProps {
+  /** Shown where there is nothing to compare with: solved, without the rightly refused. */
+  solved: number | null;
+}
+
+/** Solved or rightly refused, of what applies. */
+export function SolvedCell({ run, before, solved }: SolvedCellProps) {
+  const query = useCell({ run, before });
+  const { candidate } = query.data?.overall ?? {};
+  if (candidate === undefined) return formatFigure(solved);
+  return (
+    <>
+      {formatFigure(candidate.solved)} <span className="font-sans text-ink-3">of</span>{' '}
+      <span className="text-ink-3">{formatFigure(candidate.of)}</span>
+    </>
+  );
 }

@@ -19,12 +19,12 @@ import { BuildsTable } from '../../features/builds/builds-table.tsx';
 import { RegisterForm } from '../../features/builds/register-form.tsx';
 import { comparisonQuery } from '../../features/comparisons/comparisons.queries.ts';
 import { allowanceLines, exceptionLines } from '../../lib/allowance-words.ts';
-import { formatCommit, formatDate, formatFigure } from '../../lib/format.ts';
+import { formatCommit, formatDate } from '../../lib/format.ts';
 import { moveRowFocus } from '../../lib/row-focus.ts';
 import { useKeys } from '../../lib/use-keys.ts';
 import { useViewState } from '../../lib/use-view-state.ts';
 import { paths } from '../../paths.ts';
-import { ChangesCell, VerdictCell } from './comparison-cells.tsx';
+import { ChangesCell, SolvedCell, VerdictCell } from './comparison-cells.tsx';
 import { libraryPieces } from './library-sentence.ts';
 import { newestRuns } from './newest-runs.ts';
 import { SolverTrends } from './solver-trends.tsx';
@@ -214,10 +214,13 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
             buildHref={(build) => paths.build(build.id)}
             chosen={chosen}
             onChoose={(build) => toggle(build.id)}
-            renderSolved={(build) => {
-              const run = runOf.get(build.id);
-              return run === undefined ? '–' : formatFigure(run.progress.solved);
-            }}
+            renderSolved={(build) => (
+              <SolvedCell
+                run={idOf(build)}
+                before={beforeOf(build)}
+                solved={runOf.get(build.id)?.progress.solved ?? null}
+              />
+            )}
             renderChanges={(build) => <ChangesCell run={idOf(build)} before={beforeOf(build)} />}
             renderVerdict={(build) => <VerdictCell run={idOf(build)} before={beforeOf(build)} />}
           />
