@@ -1,5 +1,6 @@
 import { compareRuns } from '../../shared/comparison/compare.ts';
 import type { ComparableRun, Pair } from '../../shared/comparison/comparison.ts';
+import { exportJson } from '../../shared/comparison/export-json.ts';
 import { AppError } from '../../shared/errors.ts';
 import { type AllowanceSet, allowanceSet } from '../../shared/schemas/allowances.ts';
 import { type MeasurementFile, measurementFile } from '../../shared/schemas/measurement.ts';
@@ -8,7 +9,7 @@ import { solveKey } from '../../shared/schemas/solve.ts';
 import { parseCommand } from './arguments.ts';
 import { comparisonText } from './comparison-text.ts';
 import { exitCodes } from './exit.ts';
-import { readJsonFile, writeJsonFile } from './json-file.ts';
+import { readJsonFile, writeTextFile } from './json-file.ts';
 import { readYamlOrJson } from './yaml-file.ts';
 
 export const compareUsage = 'tallyroot compare REFERENCE.json CANDIDATE.json [--allow FILE] [--json FILE]';
@@ -39,7 +40,7 @@ export async function compareCommand(words: readonly string[]): Promise<number> 
   };
   console.log(comparisonText(comparison, pathsOf));
   if (values.json !== undefined) {
-    writeJsonFile(values.json, { format: 'tallyroot comparison 1', allowances, ...comparison });
+    writeTextFile(values.json, exportJson(comparison, allowances));
     console.log(`\nWritten to ${values.json}`);
   }
   if (comparison.verdict === 'could not tell') return exitCodes.wrong;

@@ -28,7 +28,12 @@ export function readJsonFile<Schema extends z.ZodType>(path: string, schema: Sch
 
 /** Writes a JSON file whole or not at all. */
 export function writeJsonFile(path: string, value: unknown): void {
+  writeTextFile(path, `${JSON.stringify(value, null, 1)}\n`);
+}
+
+/** Writes a text file whole or not at all. */
+export function writeTextFile(path: string, text: string): void {
   const partial = `${path}.part`;
-  writeFileSync(partial, `${JSON.stringify(value, null, 1)}\n`);
+  writeFileSync(partial, text);
   renameSync(partial, path);
 }
