@@ -275,15 +275,15 @@ describe('unpackArchive', () => {
   });
 
   it('refuses zip entries that share bytes, so that one file cannot be counted many times', async () => {
+    // The body of the first entry is the second with its own header; the directory points into it.
+    const inner = zipOf([{ name: 'b', body: 'x' }]).subarray(0, 32);
     const zip = zipOf([
-      { name: 'aa', body: 'abcdefgh' },
-      { name: 'aa', body: 'abcdefgh' },
+      { name: 'a', body: inner },
+      { name: 'b', body: 'x' },
     ]);
-    // Both entries of the directory point at the first; the second is given a name of its own length.
-    const directory = zip.indexOf(Buffer.from([0x50, 0x4b, 1, 2]));
-    const second = zip.indexOf(Buffer.from([0x50, 0x4b, 1, 2]), directory + 1);
-    zip.writeUInt32LE(0, second + 42);
-    expect((await refusalOf(zip)).message).toMatch(/there twice|shares its bytes/);
+    const second = zip.lastIndexOf(Buffer.from([0x50, 0x4b, 1, 2]));
+    zip.writeUInt32LE(31, second + 42);
+    expect((await refusalOf(zip)).message).toMatch(/shares its bytes/);
   });
 
   it('refuses endless headers without files', async () => {
