@@ -35,11 +35,8 @@ export function rawCheck(
 ): RawCheck | null {
   if (iterates.some((x) => !Number.isFinite(x))) return { status: 'left the domain', period: null };
   if (hasDiverged(iterates)) return { status: 'diverged', period: null };
-  const isAbove = (k: number) => {
-    const value = lnErrors[k];
-    return value !== null && value !== undefined && value > lnFloor + lnFloorFactor;
-  };
-  const period = exactPeriod(iterates, isAbove, methodClass) ?? nearPeriod(iterates, isAbove);
+  const above = lnErrors.map((value) => value !== null && value > lnFloor + lnFloorFactor);
+  const period = exactPeriod(iterates, above, methodClass) ?? nearPeriod(iterates, above);
   return period === null ? null : { status: 'cycle', period };
 }
 
@@ -66,33 +63,51 @@ function hasDiverged(iterates: readonly number[]): boolean {
   return sizes.slice(-3).every((size, i) => size > (sizes.at(-4 + i) ?? Number.POSITIVE_INFINITY));
 }
 
+/** Earlier visits of one x that are looked at, newest first: enough for any cycle, and bounded for any path. */
+const visitsLookedAt = 16;
+
 function exactPeriod(
   iterates: readonly number[],
-  isAbove: (k: number) => boolean,
+  above: readonly boolean[],
   methodClass: MethodClass,
 ): number | null {
   const depth = methodClass === 'one-point' ? 1 : 3;
-  const seen = new Map<string, number>();
+  // A Map takes −0 and 0 for the same x, as they are. Before each index: the visit of the same x before it.
+  const newest = new Map<number, number>();
+  const before: number[] = [];
   for (let k = depth - 1; k < iterates.length; k += 1) {
-    if (!isAbove(k)) continue;
-    // −0 and 0 give the same text, as they are the same x.
-    const state = iterates.slice(k - depth + 1, k + 1).join(' ');
-    const earlier = seen.get(state);
-    const period = earlier === undefined ? 1 : k - earlier;
-    if (earlier !== undefined && period >= 2 && iterates[k] !== iterates[k - 1]) return period;
-    seen.set(state, k);
+    if (!above[k]) continue;
+    const x = iterates[k] ?? 0;
+    let earlier = newest.get(x) ?? -1;
+    before[k] = earlier;
+    newest.set(x, k);
+    for (let looked = 0; earlier >= 0 && looked < visitsLookedAt; looked += 1) {
+      if (isSameState(iterates, earlier, k, depth)) {
+        const period = k - earlier;
+        if (period >= 2 && x !== iterates[k - 1]) return period;
+        break;
+      }
+      earlier = before[earlier] ?? -1;
+    }
   }
   return null;
 }
 
-function nearPeriod(iterates: readonly number[], isAbove: (k: number) => boolean): number | null {
+function isSameState(iterates: readonly number[], i: number, j: number, depth: number): boolean {
+  for (let back = 1; back < depth; back += 1) if (iterates[i - back] !== iterates[j - back]) return false;
+  return true;
+}
+
+function nearPeriod(iterates: readonly number[], above: readonly boolean[]): number | null {
   for (let period = 2; period <= longestNearPeriod; period += 1) {
     let run = 0;
     for (let k = 0; k + period < iterates.length; k += 1) {
-      const [x, next, later] = [iterates[k] ?? 0, iterates[k + 1] ?? 0, iterates[k + period] ?? 0];
+      const x = iterates[k] ?? 0;
+      const next = iterates[k + 1] ?? 0;
+      const later = iterates[k + period] ?? 0;
       const scale = closeness * (1 + Math.abs(x));
       const isBack = Math.abs(later - x) <= scale && Math.abs(next - x) > 100 * scale;
-      run = isBack && isAbove(k) && isAbove(k + period) ? run + 1 : 0;
+      run = isBack && above[k] && above[k + period] ? run + 1 : 0;
       // Three full periods in all: the first is compared with the second and the second with the third.
       if (run >= 2 * period) return period;
     }

@@ -57,17 +57,58 @@ export function checkQueries(
   path: Path,
   input: QueryCheckInput,
 ): { counts: QueryCounts; findings: QueryEvent[] } {
-  const all = evaluationsOf(path.events);
-  const findings = [
-    ...repeated(all),
-    ...outside(all, input),
-    ...late(all, input),
-    ...unused(all, path.events, input.root),
-    ...nonFinite(all),
-  ].sort((a, b) => a.index - b.index);
+  const findings = [...scan(path.events, input), ...unused(path.events, input.root)];
+  if (findings.length > 1) findings.sort((a, b) => a.index - b.index);
   const counts: QueryCounts = { repeated: 0, outside: 0, late: 0, unused: 0, nonFinite: 0 };
   for (const { finding } of findings) counts[finding] += 1;
   return { counts, findings };
+}
+
+/** All findings but `unused`, in one pass: this runs once a solve, between two solves of a lane. */
+function scan(events: readonly PathEvent[], input: QueryCheckInput): QueryEvent[] {
+  const { bracket, takesBracket, widens, roots } = input;
+  const isBound = bracket !== null && takesBracket && !widens;
+  const low = isBound ? Math.min(bracket[0], bracket[1]) : Number.NEGATIVE_INFINITY;
+  const high = isBound ? Math.max(bracket[0], bracket[1]) : Number.POSITIVE_INFINITY;
+  const findings: QueryEvent[] = [];
+  const known = new FirstAsked();
+  // The line that had the answer first, and how many evaluations have come after it.
+  let answered: number | null = null;
+  let since = 0;
+  for (const one of evaluationsOf(events)) {
+    const { x, index } = one;
+    const earlier = known.note(one);
+    if (earlier !== null) findings.push(found('repeated', one, earlier));
+    if ((x < low || x > high) && Number.isFinite(x)) findings.push(found('outside', one));
+    if (answered !== null) {
+      since += 1;
+      if (since > lateAllowance) findings.push(found('late', one, answered));
+    } else if (isThere(x, roots)) answered = index;
+    if (!Number.isFinite(x) || !Number.isFinite(one.answer)) findings.push(found('nonFinite', one));
+  }
+  return findings;
+}
+
+function isThere(x: number, roots: QueryCheckInput['roots']): boolean {
+  for (const { ref, attainable } of roots) if (Math.abs(signedError(x, ref)) <= 2 * attainable) return true;
+  return false;
+}
+
+/** The line at which each kind of evaluation was first asked for at each x. */
+class FirstAsked {
+  // Maps take −0 and 0 for the same key, and NaN for itself.
+  readonly #f = new Map<number, number>();
+  readonly #df = new Map<number, number>();
+  readonly #d2f = new Map<number, number>();
+
+  /** The line that asked for the same before, or null, when this one is noted as the first. */
+  note({ asked, x, index }: Asked): number | null {
+    const first = asked === 'f' ? this.#f : asked === 'df' ? this.#df : this.#d2f;
+    const earlier = first.get(x);
+    if (earlier !== undefined) return earlier;
+    first.set(x, index);
+    return null;
+  }
 }
 
 /**
@@ -75,9 +116,10 @@ export function checkQueries(
  * same x before it. An fdf repeats where both its values were known already; a step never does.
  */
 export function repeatsOf(events: readonly PathEvent[]): (number | null)[] {
+  const known = new FirstAsked();
   const earlier = events.map((): (number | null)[] => []);
-  for (const { index, known } of withKnown(evaluationsOf(events))) earlier[index]?.push(known);
-  return earlier.map((known) => (known.every((index) => index !== null) ? (known[0] ?? null) : null));
+  for (const one of evaluationsOf(events)) earlier[one.index]?.push(known.note(one));
+  return earlier.map((lines) => (lines.every((index) => index !== null) ? (lines[0] ?? null) : null));
 }
 
 function evaluationsOf(events: readonly PathEvent[]): Asked[] {
@@ -91,56 +133,19 @@ function evaluationsOf(events: readonly PathEvent[]): Asked[] {
   return all;
 }
 
-function withKnown(all: readonly Asked[]): (Asked & { known: number | null })[] {
-  // Maps take −0 and 0 for the same key, and NaN for itself.
-  const first = {
-    f: new Map<number, number>(),
-    df: new Map<number, number>(),
-    d2f: new Map<number, number>(),
-  };
-  return all.map((one) => {
-    const known = first[one.asked].get(one.x) ?? null;
-    if (known === null) first[one.asked].set(one.x, one.index);
-    return { ...one, known };
-  });
-}
-
 function found(finding: QueryFinding, { asked, index, x }: Asked, earlier: number | null = null): QueryEvent {
   return { finding, asked, index, x, earlier };
 }
 
-function repeated(all: readonly Asked[]): QueryEvent[] {
-  return withKnown(all)
-    .filter((one) => one.known !== null)
-    .map((one) => found('repeated', one, one.known));
-}
-
-function outside(all: readonly Asked[], { bracket, takesBracket, widens }: QueryCheckInput): QueryEvent[] {
-  if (bracket === null || !takesBracket || widens) return [];
-  const [low, high] = [Math.min(...bracket), Math.max(...bracket)];
-  return all
-    .filter(({ x }) => Number.isFinite(x) && (x < low || x > high))
-    .map((one) => found('outside', one));
-}
-
-function late(all: readonly Asked[], { roots }: QueryCheckInput): QueryEvent[] {
-  const isThere = ({ x }: Asked) =>
-    roots.some(({ ref, attainable }) => {
-      return Math.abs(signedError(x, ref)) <= 2 * attainable;
-    });
-  const first = all.findIndex(isThere);
-  if (first < 0) return [];
-  const answer = all[first]?.index ?? null;
-  return all.slice(first + 1 + lateAllowance).map((one) => found('late', one, answer));
-}
-
-function unused(all: readonly Asked[], events: readonly PathEvent[], root: number | null): QueryEvent[] {
-  const last = all.at(-1);
+function unused(events: readonly PathEvent[], root: number | null): QueryEvent[] {
+  const last = events.findLast((event) => event.kind !== 'step');
+  // Nothing to look for in most paths: the last x was not returned, or no derivative was asked for there.
   if (last === undefined || root === null || last.x !== root) return [];
-  const hasMovedOn = events.slice(last.index + 1).some((event) => event.x !== root);
+  const all = evaluationsOf(events);
+  const lastIndex = all.at(-1)?.index ?? 0;
+  const hasMovedOn = events.slice(lastIndex + 1).some((event) => event.x !== root);
   if (hasMovedOn) return [];
-  const atLast = all.filter(({ x }) => x === root);
-  const values = atLast.filter(({ asked }) => asked === 'f');
+  const values = all.filter(({ asked, x }) => asked === 'f' && x === root);
   if (values.length > 0 && !values.some(({ answer }) => answer === 0)) return [];
   // Only the unbroken stretch at the end: an earlier derivative there led to what came in between.
   const stretch = all.findLastIndex(({ x }) => x !== root);
@@ -148,10 +153,4 @@ function unused(all: readonly Asked[], events: readonly PathEvent[], root: numbe
     .slice(stretch + 1)
     .filter(({ asked }) => asked !== 'f')
     .map((one) => found('unused', one));
-}
-
-function nonFinite(all: readonly Asked[]): QueryEvent[] {
-  return all
-    .filter(({ x, answer }) => !Number.isFinite(x) || !Number.isFinite(answer))
-    .map((one) => found('nonFinite', one));
 }
