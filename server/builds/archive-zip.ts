@@ -1,9 +1,10 @@
-import { pipeline, type Readable } from 'node:stream';
-import { crc32, createInflateRaw, type InflateRaw } from 'node:zlib';
-import { type Entry, openPromise, type ZipFile } from 'yauzl';
+import { setImmediate as nextTurn } from 'node:timers/promises';
+import { crc32 } from 'node:zlib';
+import type { Entry, ZipFile } from 'yauzl';
 import { AppError } from '../../shared/errors.ts';
 import { decodeName, EntryTree, refuseEntry, refuseWhole } from './archive-names.ts';
 import type { ArchiveBudget, ArchiveLimits, ArchiveSink } from './archive-sink.ts';
+import { ZipReader } from './archive-zip-file.ts';
 
 /**
  * Reads a zip archive by its central directory, and refuses it where the local headers or the space between
@@ -39,7 +40,8 @@ export async function readZip(
   budget: ArchiveBudget,
   sink: ArchiveSink,
 ): Promise<void> {
-  const zip = await openZip(file);
+  const reader = new ZipReader(file);
+  const zip = await openZip(reader);
   // What goes wrong while reading is thrown by the calls below; this is for the closing of the file.
   zip.on('error', () => undefined);
   try {
@@ -49,7 +51,9 @@ export async function readZip(
     const spans: Span[] = [];
     const directoryStart = Number(zip.readEntryCursor);
     for await (const entry of zip.eachEntry()) {
-      spans.push(await readEntry({ zip, entry, tree, budget, sink }));
+      // Small entries are read without waiting; others get their turn between two handfuls.
+      if (spans.length % 64 === 63) await nextTurn();
+      spans.push(await readEntry({ reader, zip, entry, tree, budget, sink }));
     }
     checkSpans(spans, directoryStart);
     checkEnd(zip);
@@ -70,10 +74,11 @@ function isSystemError(error: unknown): boolean {
   return error instanceof Error && 'syscall' in error;
 }
 
-async function openZip(file: string): Promise<ZipFile> {
+async function openZip(reader: ZipReader): Promise<ZipFile> {
   try {
-    return await openPromise(file, { autoClose: false, decodeStrings: false, validateEntrySizes: false });
+    return await reader.open();
   } catch (error) {
+    reader.close(() => undefined);
     if (isSystemError(error)) throw error;
     throw refuseWhole('archive', `its directory cannot be read (${messageOf(error)})`, error);
   }
@@ -110,13 +115,14 @@ function nameOf(entry: Entry): string {
 }
 
 async function readEntry(context: {
+  reader: ZipReader;
   zip: ZipFile;
   entry: Entry;
   tree: EntryTree;
   budget: ArchiveBudget;
   sink: ArchiveSink;
 }): Promise<Span> {
-  const { zip, entry, tree, budget, sink } = context;
+  const { reader, zip, entry, tree, budget, sink } = context;
   const name = nameOf(entry);
   const mode = entry.externalFileAttributes >>> 16;
   const type = mode & 0o170000;
@@ -157,7 +163,7 @@ async function readEntry(context: {
   budget.addFile();
   sink.startFile(path, type === 0 ? 0o600 : mode);
   try {
-    await readBody(zip, entry, (chunk) => {
+    await readBody(reader, entry, local.fileDataStart, (chunk) => {
       budget.addBytes(chunk.length, name);
       sink.write(chunk);
     });
@@ -171,25 +177,20 @@ async function readEntry(context: {
 }
 
 /** Inflates and checks the data: length, CRC, and that nothing follows behind the compressed stream. */
-async function readBody(zip: ZipFile, entry: Entry, take: (chunk: Buffer) => void): Promise<void> {
-  const size = entry.compressedSize;
-  const raw = await zip.openReadStreamPromise(entry, { decodeFileData: false });
-  let inflate: InflateRaw | null = null;
-  let source: Readable = raw;
-  if (entry.compressionMethod === DEFLATED) {
-    inflate = createInflateRaw();
-    // Its errors reach the loop below, which reads the last stream of the pipeline.
-    source = pipeline(raw, inflate, () => undefined);
-  }
+async function readBody(
+  reader: ZipReader,
+  entry: Entry,
+  start: number,
+  take: (chunk: Buffer) => void,
+): Promise<void> {
   let length = 0;
   let sum = 0;
-  for await (const chunk of source) {
-    if (!Buffer.isBuffer(chunk)) continue;
+  const isDeflated = entry.compressionMethod === DEFLATED;
+  for await (const chunk of reader.contents(start, entry.compressedSize, isDeflated)) {
     length += chunk.length;
     sum = crc32(chunk, sum);
     take(chunk);
   }
-  if (inflate !== null && inflate.bytesWritten !== size) throw new Error('something follows behind its data');
   if (length !== entry.uncompressedSize) throw new Error('its length is not the one that the directory says');
   if (sum !== entry.crc32) throw new Error('its checksum does not match');
 }

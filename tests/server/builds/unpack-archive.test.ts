@@ -1,4 +1,5 @@
 import { execFileSync } from 'node:child_process';
+import { randomBytes } from 'node:crypto';
 import {
   appendFileSync,
   mkdirSync,
@@ -117,6 +118,21 @@ describe('unpackArchive', () => {
       expect(await unpackArchive(join(folder, format), into)).toEqual({ files: 1, bytes: 7 });
       expect(readdirSync(into)).toEqual(['a.c']);
     }
+  });
+
+  it('streams large zip entries under the same checks as small ones', async () => {
+    const body = randomBytes(150_000);
+    const large: ZipEntry = { name: 'large', body, deflated: true };
+    await unpackArchive(put(zipOf([large, { name: 'stored', body }])), join(folder, 'out'));
+    for (const name of ['large', 'stored'])
+      expect(readFileSync(join(folder, 'out', name)).equals(body)).toBe(true);
+    rmSync(join(folder, 'out'), { recursive: true });
+    expect((await refusalOf(zipOf([{ ...large, crc: 1 }]))).message).toMatch(/checksum/);
+    const trailed = Buffer.concat([deflateRawSync(body), Buffer.from('more')]);
+    expect((await refusalOf(zipOf([{ ...large, raw: trailed }]))).message).toMatch(/follows behind/);
+    expect((await refusalOf(zipOf([{ ...large, raw: trailed.subarray(0, 100_000) }]))).message).toMatch(
+      /damaged/,
+    );
   });
 
   it('takes a folder off the top only where it is alone there', async () => {
