@@ -123,6 +123,19 @@ export class EntryTree {
     return path;
   }
 
+  /**
+   * To be called when all entries are in. Git takes any folder with HEAD, objects and refs for a repository and
+   * obeys the `config` beside them, which can name programs; no source needs to look like that.
+   */
+  finish(): void {
+    for (const [key, node] of this.#nodes) {
+      if (!key.endsWith('/head')) continue;
+      const beside = (name: string): boolean => this.#nodes.has(`${key.slice(0, -'head'.length)}${name}`);
+      if (beside('commondir') || (beside('objects') && beside('refs')))
+        throw this.#refuse(node.path, 'lies in a folder that Git would take for a repository');
+    }
+  }
+
   #clean(name: string, kind: EntryKind): string {
     const fault = pathFaultOf(name);
     if (fault !== null) throw this.#refuse(name, fault);

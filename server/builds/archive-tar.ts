@@ -46,7 +46,10 @@ export async function readTar(
     let extension: Extension = { path: null, size: null };
     for (;;) {
       const block = await readBlock(reader, budget);
-      if (isZero(block)) return await readEnd(reader, budget);
+      if (isZero(block)) {
+        tree.finish();
+        return await readEnd(reader, budget);
+      }
       const header = decodeHeader(block);
       if (header === null)
         throw refuseWhole('archive', 'a header in it is damaged (its checksum does not match)');

@@ -55,6 +55,7 @@ export async function readZip(
       if (spans.length % 64 === 63) await nextTurn();
       spans.push(await readEntry({ reader, zip, entry, tree, budget, sink }));
     }
+    tree.finish();
     checkSpans(spans, directoryStart);
     checkEnd(zip);
   } catch (error) {

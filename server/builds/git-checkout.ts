@@ -177,6 +177,7 @@ async function readEntries(mirror: string, commit: string, limits: CheckoutLimit
     bytes += entry.bytes;
     if (bytes > limits.bytes) throw refuseWhole('commit', `it is larger than ${limits.bytes} bytes`);
   }
+  tree.finish();
   return entries;
 }
 

@@ -240,6 +240,12 @@ describe('checkOut', () => {
     }
   });
 
+  it('refuses a commit with a folder that Git would take for a repository', async () => {
+    for (const name of ['HEAD', 'config', 'objects/x', 'refs/x']) source.put(`fixtures/${name}`, 'x');
+    source.commit('a bare repository');
+    expect((await refusalOf('main')).message).toMatch(/fixtures\/HEAD lies in a folder that Git would take/);
+  });
+
   it('refuses a tree that writes through a link, or holds one name twice', async () => {
     const inner = source.commitTree([{ mode: '100644', name: 'x', body: 'x' }], 'inner');
     const tree = source.git('rev-parse', `${inner}^{tree}`);

@@ -251,6 +251,21 @@ describe('unpackArchive', () => {
       expect((await refusalOf(bytes)).message).toMatch(reason);
   });
 
+  it('refuses a folder that Git would take for a repository, whatever it is called', async () => {
+    const layouts = [
+      ['lib/HEAD', 'lib/config', 'lib/objects/x', 'lib/refs/x'],
+      ['head', 'config', 'objects/x', 'refs/x'],
+      ['a/HEAD', 'a/commondir', 'b/objects/x', 'b/refs/x'],
+    ];
+    for (const names of layouts) {
+      const entries = names.map((name) => ({ name, body: 'x' }));
+      for (const bytes of [tarOf(...entries), zipOf(entries)])
+        expect((await refusalOf(bytes)).message).toMatch(/take for a repository/);
+    }
+    const file = put(tarOf({ name: 'HEAD', body: 'x' }, { name: 'refs/x', body: 'x' }));
+    expect(await unpackArchive(file, join(folder, 'out'))).toEqual({ files: 2, bytes: 2 });
+  });
+
   it('counts folders on the way to a file as entries', async () => {
     const entries = Array.from({ length: 20 }, (_, index) => ({ name: `${index}/${'d/'.repeat(40)}x` }));
     expect((await refusalOf(tarOf(...entries))).message).toMatch(/more than 500 files and folders/);
