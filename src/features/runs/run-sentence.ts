@@ -98,7 +98,9 @@ function resultPieces(run: RunView, solves: readonly SolveView[], counts: Outcom
     ...head,
     ...rest,
     figure(`${formatFigure(counts.success)} of ${formatFigure(counts.total)}`),
-    plain(run.status === 'finished' ? ' are.' : ' of those that were run are.'),
+    plain(
+      `${run.status === 'finished' ? '' : ' of those that were run'} ${counts.success === 1 ? 'is' : 'are'}.`,
+    ),
   ];
 }
 

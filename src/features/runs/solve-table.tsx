@@ -152,7 +152,7 @@ export function SolveTable(props: SolveTableProps) {
                         <Link
                           to={props.solveHref(solve.id)}
                           data-cell={`${index},${column}`}
-                          className={`flex items-center gap-1 no-underline ${isDim ? 'opacity-35' : ''}`}
+                          className={`flex min-h-6 items-center gap-1 no-underline ${isDim ? 'opacity-35' : ''}`}
                         >
                           <span className="sr-only">
                             {solver} on {row.caseId}:
