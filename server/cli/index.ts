@@ -2,6 +2,7 @@ import { compareCommand, compareUsage } from './compare-command.ts';
 import { demoCommand, demoUsage } from './demo-command.ts';
 import { exitCodes, explainError } from './exit.ts';
 import { measureCommand, measureUsage } from './measure-command.ts';
+import { schemaCommand, schemaUsage } from './schema-command.ts';
 import { suitesCommand, suitesUsage } from './suites-command.ts';
 import { traceCommand, traceUsage } from './trace-command.ts';
 
@@ -10,13 +11,16 @@ const commands = new Map<string, (words: readonly string[]) => Promise<number>>(
   ['compare', compareCommand],
   ['trace', traceCommand],
   ['suites', suitesCommand],
+  ['schema', schemaCommand],
   ['demo', demoCommand],
 ]);
 
 const help = [
   'tallyroot: what a change did to a solver',
   '',
-  ...[measureUsage, compareUsage, traceUsage, suitesUsage, demoUsage].map((usage) => `  ${usage}`),
+  ...[measureUsage, compareUsage, traceUsage, suitesUsage, schemaUsage, demoUsage].map(
+    (usage) => `  ${usage}`,
+  ),
   '',
   'Exit status: 0 done, or within allowances; 1 beyond allowances; 2 anything that went wrong.',
 ].join('\n');

@@ -168,6 +168,27 @@ describe('tallyroot suites', () => {
   });
 });
 
+describe('tallyroot schema', () => {
+  it('prints the JSON Schema that the files are checked with', async () => {
+    const ended = await tallyroot('schema', 'measurement');
+    expect(ended.code).toBe(0);
+    const schema = JSON.parse(ended.out);
+    expect(schema.properties.format.const).toBe('tallyroot measurement 1');
+    expect(schema.properties.solves.items.required).toEqual(
+      expect.arrayContaining([
+        'solver',
+        'case',
+        'start',
+        'outcome',
+        'evaluations',
+        'order',
+        'queryCheck',
+        'path',
+      ]),
+    );
+  });
+});
+
 describe('tallyroot', () => {
   it('prints its commands, and answers 2 for one that it does not know', async () => {
     expect((await tallyroot()).out).toContain('tallyroot measure --build DIR');
