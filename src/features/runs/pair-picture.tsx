@@ -3,6 +3,7 @@ import type { SolveView } from '../../../shared/schemas/runs.ts';
 import { stripHeight } from '../../components/digit-strip/digit-strip.tsx';
 import { StripPair } from '../../components/digit-strip/strip-pair.tsx';
 import type { SolvePicture } from '../../lib/strip-of-solve.ts';
+import { useSeen } from '../../lib/use-seen.ts';
 import { useSolvePicture } from './solve-picture.tsx';
 
 export interface PairPictureProps {
@@ -15,10 +16,17 @@ const stripOf = (picture: SolvePicture | undefined) => (picture?.kind === 'strip
 
 /** Both strips of a pair, the reference above; words where the case has no root. */
 export function PairPicture({ reference, candidate, suiteCase }: PairPictureProps) {
-  const above = useSolvePicture(reference, suiteCase);
-  const below = useSolvePicture(candidate, suiteCase);
-  if (above === undefined || below === undefined) return <div style={{ height: 2 * stripHeight }} />;
-  const hasStrip = above.kind === 'strip' || below.kind === 'strip';
-  const words = below.kind === 'words' ? below.words : above.kind === 'words' ? above.words : null;
-  return <StripPair reference={stripOf(above)} candidate={stripOf(below)} words={hasStrip ? null : words} />;
+  const [box, isSeen] = useSeen<HTMLDivElement>();
+  const above = useSolvePicture(reference, suiteCase, isSeen);
+  const below = useSolvePicture(candidate, suiteCase, isSeen);
+  const isReady = above !== undefined && below !== undefined;
+  const hasStrip = above?.kind === 'strip' || below?.kind === 'strip';
+  const words = below?.kind === 'words' ? below.words : above?.kind === 'words' ? above.words : null;
+  return (
+    <div ref={box} style={{ minHeight: 2 * stripHeight }} className="flex items-center">
+      {isReady && (
+        <StripPair reference={stripOf(above)} candidate={stripOf(below)} words={hasStrip ? null : words} />
+      )}
+    </div>
+  );
 }

@@ -13,7 +13,7 @@ export interface RunProgressProps {
 
 const mostStrokes = 120;
 
-/** Strokes of one solver: in the order of solving, then the one at work, then those that wait. */
+/** Strokes of one solver: in the order of solving, then the next one, then those that wait. */
 export function tallyStrokes(
   solves: readonly SolveView[],
   planned: number,
@@ -38,7 +38,7 @@ export function thinOut(strokes: readonly TallyStroke[], each: number): TallyStr
   });
 }
 
-/** Five-bar tallies by solver: dotted waits, vermilion was not solved, the beating one is at work. */
+/** Five-bar tallies by solver: dotted waits, vermilion was not solved, the beating one is next. */
 export function RunProgress({ run, solves, cases }: RunProgressProps) {
   const rows = run.solvers.map(({ declaration }) => {
     const own = solves.filter((solve) => solve.solver === declaration.name).toSorted((a, b) => a.id - b.id);

@@ -5,15 +5,17 @@ import type { SuiteCase } from '../../../shared/schemas/case.ts';
 import type { SolveView } from '../../../shared/schemas/runs.ts';
 import { DigitStrip, stripWidth } from '../../components/digit-strip/digit-strip.tsx';
 import { pictureOfSolve, type SolvePicture, wordsInsteadOfStrip } from '../../lib/strip-of-solve.ts';
+import { useSeen } from '../../lib/use-seen.ts';
 import { solveQuery } from './runs.queries.ts';
 
 /** The picture of a stored solve; undefined while its path is read. */
 export function useSolvePicture(
   solve: SolveView | null,
   suiteCase: SuiteCase | undefined,
+  isSeen: boolean,
 ): SolvePicture | undefined {
   const words = solve === null ? 'not there' : wordsInsteadOfStrip(solve, suiteCase);
-  const query = useQuery({ ...solveQuery(solve?.id ?? 0), enabled: words === null });
+  const query = useQuery({ ...solveQuery(solve?.id ?? 0), enabled: isSeen && words === null });
   const file = query.data?.path;
   return useMemo(() => {
     if (words !== null) return { kind: 'words', words };
@@ -32,16 +34,25 @@ const isFailure = (solve: SolveView): boolean => !isSuccess(solve) && solve.outc
 
 /** A strip, or the words that stand for it; an empty place of the same size while it is read. */
 export function SolvePictureCell({ solve, suiteCase, pitch }: SolvePictureCellProps) {
-  const picture = useSolvePicture(solve, suiteCase);
-  if (picture === undefined) return <span className="block h-5" style={{ width: stripWidth(pitch) }} />;
-  if (picture.kind === 'words')
-    return (
-      <span
-        className={`min-w-0 truncate text-header ${isFailure(solve) ? 'text-worse' : 'text-ink-3'}`}
-        title={picture.words}
-      >
-        {pitch < 10 ? picture.words.replace('no root here; ', '') : picture.words}
-      </span>
-    );
-  return <DigitStrip strip={picture.strip} counts={picture.counts} pitch={pitch} />;
+  const [box, isSeen] = useSeen<HTMLSpanElement>();
+  const picture = useSolvePicture(solve, suiteCase, isSeen);
+  return (
+    <span
+      ref={box}
+      className="block min-h-5 min-w-0"
+      style={{ minWidth: picture === undefined ? stripWidth(pitch) : 0 }}
+    >
+      {picture?.kind === 'strip' && (
+        <DigitStrip strip={picture.strip} counts={picture.counts} pitch={pitch} />
+      )}
+      {picture?.kind === 'words' && (
+        <span
+          className={`block truncate text-header leading-5 ${isFailure(solve) ? 'text-worse' : 'text-ink-3'}`}
+          title={picture.words}
+        >
+          {pitch < 10 ? picture.words.replace('no root here; ', '') : picture.words}
+        </span>
+      )}
+    </span>
+  );
 }

@@ -86,7 +86,7 @@ export function ErrorPlot({ reference, candidate, attainable }: ErrorPlotProps) 
         margin={{ top: 18, right: 36, bottom: 26, left: 0 }}
         accessibilityLayer={false}
       >
-        <CartesianGrid vertical={false} stroke="var(--rule)" />
+        <CartesianGrid vertical={false} syncWithTicks stroke="var(--rule)" />
         <XAxis
           dataKey="number"
           type="number"
@@ -94,20 +94,21 @@ export function ErrorPlot({ reference, candidate, attainable }: ErrorPlotProps) 
           ticks={ticks}
           allowDecimals={false}
           tickLine={false}
-          stroke="var(--rule-strong)"
+          axisLine={false}
           tick={axisText}
           height={34}
         >
           <Label value="evaluation" position="insideBottom" fill="var(--ink)" fontSize={12} offset={0} />
         </XAxis>
         <YAxis
-          domain={[0, 16]}
+          domain={[again.length > 0 ? -0.8 : 0, 16]}
           ticks={[0, 4, 8, 12, 16]}
           width={28}
           axisLine={false}
           tickLine={false}
           tick={axisText}
         />
+        <ReferenceLine y={0} stroke="var(--rule-strong)" />
         {attainable !== null && (
           <ReferenceLine
             y={attainable}
@@ -125,8 +126,8 @@ export function ErrorPlot({ reference, candidate, attainable }: ErrorPlotProps) 
           <ReferenceLine
             key={number}
             segment={[
-              { x: number, y: 0 },
-              { x: number, y: 0.5 },
+              { x: number, y: -0.15 },
+              { x: number, y: -0.7 },
             ]}
             stroke="var(--worse)"
             strokeWidth={1.9}
@@ -162,7 +163,7 @@ export function ErrorPlot({ reference, candidate, attainable }: ErrorPlotProps) 
       </LineChart>
       {again.length > 0 && (
         <p className="text-note text-worse">
-          Vermilion strokes at the axis: asked again, <span className="num">{again.length}</span> times.
+          Vermilion strokes below the axis: asked again, <span className="num">{again.length}</span> times.
         </p>
       )}
     </div>

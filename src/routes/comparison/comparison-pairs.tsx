@@ -42,6 +42,16 @@ export function ComparisonPairs({ pairs, cases, pairHref }: ComparisonPairsProps
   const same = matchText(pairs, text).filter((pair) => pair.change === 'same');
   const isSameShown = chosen.includes('same');
   const changed = pairs.filter((pair) => pair.change !== 'same').length;
+  const standard = words.map((word) => word.change).filter((change) => change !== 'same');
+  const effective: string[] = chosen.length === 0 ? standard : chosen;
+  // Nothing in the address means all changed pairs; so a word that is pressed is switched off alone.
+  const flip = (change: string): void => {
+    const next = effective.includes(change)
+      ? effective.filter((word) => word !== change)
+      : [...effective, change];
+    const isStandard = next.length === standard.length && standard.every((word) => next.includes(word));
+    view.set({ change: isStandard ? [] : next.length === 0 ? ['none'] : next });
+  };
   const clear = (): void => view.clear('text', 'change', 'open');
   const flipSort = (): void => view.set({ sort: sort === 'suite' ? '' : 'suite' });
   const showSame = (): void =>
@@ -53,7 +63,7 @@ export function ComparisonPairs({ pairs, cases, pairHref }: ComparisonPairsProps
     o: flipSort,
     x: clear,
     ...Object.fromEntries(
-      words.slice(0, 9).map((word, index) => [String(index + 1), () => view.toggle('change', word.change)]),
+      words.slice(0, 9).map((word, index) => [String(index + 1), () => flip(word.change)]),
     ),
   });
   return (
@@ -87,8 +97,8 @@ export function ComparisonPairs({ pairs, cases, pairHref }: ComparisonPairsProps
               count={count}
               mark={<ChangeMark change={change} />}
               colour={changeColour[change]}
-              isPressed={chosen.length === 0 ? change !== 'same' : chosen.includes(change)}
-              onPress={() => view.toggle('change', change)}
+              isPressed={effective.includes(change)}
+              onPress={() => flip(change)}
             />
           ))}
           <TextAction hotkey="o" onClick={flipSort} className="text-table">

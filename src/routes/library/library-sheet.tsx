@@ -26,7 +26,7 @@ import { useViewState } from '../../lib/use-view-state.ts';
 import { paths } from '../../paths.ts';
 import { ChangesCell, SolvedCell, VerdictCell } from './comparison-cells.tsx';
 import { libraryPieces } from './library-sentence.ts';
-import { newestRuns } from './newest-runs.ts';
+import { newestRuns, suitesByUse } from './newest-runs.ts';
 import { SolverTrends } from './solver-trends.tsx';
 
 export interface LibrarySheetProps {
@@ -49,7 +49,7 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
   const view = useViewState();
   const navigate = useNavigate();
   const [isRegistering, setIsRegistering] = useState(false);
-  const suites = [...new Set(runs.map((run) => run.suite.slug))];
+  const suites = suitesByUse(runs);
   const suite = view.get('suite') || suites[0] || '';
   const runOf = newestRuns(runs, suite);
   const withRun = builds.filter((build) => runOf.has(build.id));

@@ -9,3 +9,10 @@ export function newestRuns(runs: readonly RunView[], suite: string): Map<number,
   }
   return newest;
 }
+
+/** Suites that the library was run on, the one with the most builds first; of equals the one run last. */
+export function suitesByUse(runs: readonly RunView[]): string[] {
+  const names = [...new Set(runs.map((run) => run.suite.slug))];
+  const uses = new Map(names.map((name) => [name, newestRuns(runs, name).size]));
+  return names.toSorted((a, b) => (uses.get(b) ?? 0) - (uses.get(a) ?? 0));
+}

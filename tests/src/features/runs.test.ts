@@ -5,7 +5,7 @@ import { tallyStrokes, thinOut } from '../../../src/features/runs/run-progress.t
 import { countOutcomes, runSentence } from '../../../src/features/runs/run-sentence.ts';
 import { buildMatrix, filterMatrix, outcomeWord } from '../../../src/features/runs/solve-matrix.ts';
 import { pitchFor, solversThatFit } from '../../../src/features/runs/solve-table.tsx';
-import { newestRuns } from '../../../src/routes/library/newest-runs.ts';
+import { newestRuns, suitesByUse } from '../../../src/routes/library/newest-runs.ts';
 import { rightRefusal, someCase, someRun, someSolve, someSolver } from './builders.ts';
 
 describe('sentence of a run', () => {
@@ -135,5 +135,17 @@ describe('newestRuns', () => {
       at(2, 2, { suite: { slug: 'brackets', title: '', revision: 1, hash: '' } }),
     ];
     expect([...newestRuns(runs, 'traps')].map(([build, run]) => [build, run.id])).toEqual([[1, 4]]);
+  });
+});
+
+describe('suitesByUse', () => {
+  it('has the suite with the most builds first, of equals the one run last', () => {
+    const on = (slug: string, build: number) =>
+      someRun({
+        suite: { slug, title: '', revision: 1, hash: '' },
+        build: { id: build, label: 'x', commit: null },
+      });
+    const runs = [on('brackets', 3), on('traps', 2), on('traps', 1), on('starts', 1)];
+    expect(suitesByUse(runs)).toEqual(['traps', 'brackets', 'starts']);
   });
 });
