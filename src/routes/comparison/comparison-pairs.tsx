@@ -46,11 +46,13 @@ export function ComparisonPairs({ pairs, cases, pairHref }: ComparisonPairsProps
   const effective: string[] = chosen.length === 0 ? standard : chosen;
   // Nothing in the address means all changed pairs; so a word that is pressed is switched off alone.
   const flip = (change: string): void => {
-    const next = effective.includes(change)
-      ? effective.filter((word) => word !== change)
-      : [...effective, change];
-    const isStandard = next.length === standard.length && standard.every((word) => next.includes(word));
-    view.set({ change: isStandard ? [] : next.length === 0 ? ['none'] : next });
+    view.change('change', (now) => {
+      const shown: string[] = now.length === 0 ? standard : now;
+      const next = shown.includes(change) ? shown.filter((word) => word !== change) : [...shown, change];
+      const isStandard = next.length === standard.length && standard.every((word) => next.includes(word));
+      if (isStandard) return [];
+      return next.length === 0 ? ['none'] : next.filter((word) => word !== 'none');
+    });
   };
   const clear = (): void => view.clear('text', 'change', 'open');
   const flipSort = (): void => view.set({ sort: sort === 'suite' ? '' : 'suite' });

@@ -75,8 +75,10 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
     .map(Number)
     .filter((id) => builds.some((build) => build.id === id));
   const toggle = (id: number): void => {
-    const next = chosen.includes(id) ? chosen.filter((other) => other !== id) : [...chosen, id].slice(-2);
-    view.set({ chosen: next.map(String) });
+    view.change('chosen', (words) => {
+      const word = String(id);
+      return words.includes(word) ? words.filter((other) => other !== word) : [...words, word].slice(-2);
+    });
   };
   const pair = builds.filter((build) => chosen.includes(build.id));
   const [candidate, reference] = [idOf(pair[0]), idOf(pair[1])];

@@ -1,7 +1,8 @@
-import { useQueries } from '@tanstack/react-query';
+import { type UseQueryResult, useQueries } from '@tanstack/react-query';
+import { useMemo } from 'react';
 import type { BuildView } from '../../../shared/schemas/builds.ts';
 import type { SolverView } from '../../../shared/schemas/libraries.ts';
-import type { RunView } from '../../../shared/schemas/runs.ts';
+import type { RunView, SolveView } from '../../../shared/schemas/runs.ts';
 import { Entry } from '../../components/sheet/entry.tsx';
 import { LoadingStrokes } from '../../components/ui/loading-strokes.tsx';
 import { ProblemNote } from '../../components/ui/problem-note.tsx';
@@ -18,11 +19,25 @@ export interface SolverTrendsProps {
   suite: string;
 }
 
+/** All lists once all are there. Kept the same object while nothing changes, so that the series are made once. */
+function combineSolves(queries: UseQueryResult<SolveView[]>[]) {
+  const lists = queries.flatMap((query) => (query.data === undefined ? [] : [query.data]));
+  return {
+    solves: lists.length === queries.length ? lists : undefined,
+    failed: queries.find((query) => query.isError),
+  };
+}
+
 /** How each solver came along over the builds. */
 export function SolverTrends({ shown, solvers, suite }: SolverTrendsProps) {
-  const queries = useQueries({ queries: shown.map(({ run }) => solvesQuery(run.id)) });
-  const failed = queries.find((query) => query.isError);
-  const isReady = queries.every((query) => query.data !== undefined);
+  const { solves, failed } = useQueries({
+    queries: shown.map(({ run }) => solvesQuery(run.id)),
+    combine: combineSolves,
+  });
+  const series = useMemo(
+    () => solves && trendSeries(solves.map((list, index) => ({ label: String(index), solves: list }))),
+    [solves],
+  );
   return (
     <Entry
       title="Solvers"
@@ -46,11 +61,9 @@ export function SolverTrends({ shown, solvers, suite }: SolverTrendsProps) {
           error={failed.error}
           onRetry={() => void failed.refetch()}
         />
-      ) : isReady ? (
+      ) : series !== undefined ? (
         <TrendTable
-          series={trendSeries(
-            shown.map(({ build }, index) => ({ label: build.label, solves: queries[index]?.data ?? [] })),
-          )}
+          series={series}
           labels={shown.map(({ build }) => formatCommit(build.commit ?? build.label))}
           solvers={solvers}
         />
