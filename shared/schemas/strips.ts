@@ -14,3 +14,11 @@ export type StripEvent = z.infer<typeof stripEvent>;
 export const solveStrip = z.strictObject({ solve: z.int().min(1), events: z.array(stripEvent).nullable() });
 export type SolveStrip = z.infer<typeof solveStrip>;
 export const solveStripList = z.strictObject({ items: z.array(solveStrip) });
+
+/** Ids of solves, separated by commas: those that a page is about to show. */
+export const stripsQuery = z.strictObject({
+  solves: z
+    .string()
+    .regex(/^\d{1,15}(,\d{1,15}){0,199}$/, 'up to 200 ids of solves, separated by commas, were expected')
+    .transform((text) => [...new Set(text.split(',').map(Number))]),
+});

@@ -1,5 +1,5 @@
-import { nearestRoot } from '../../shared/numerics/digits.ts';
 import { isRightlyRefused } from '../../shared/numerics/judge-claim.ts';
+import { rootOfSolve } from '../../shared/numerics/root-of-solve.ts';
 import { rootReference } from '../../shared/numerics/root-reference.ts';
 import { stripEvents } from '../../shared/numerics/strip-events.ts';
 import type { SuiteCase } from '../../shared/schemas/case.ts';
@@ -31,22 +31,6 @@ export function attainableDigits(root: SuiteCase['roots'][number]): number {
   const size = Math.abs(Number(root.value));
   const relative = size === 0 ? root.attainable : root.attainable / size;
   return relative === 0 ? 16 : Math.min(16, Math.max(0, -Math.log10(relative)));
-}
-
-/** Index of the root that a solve is measured against: the one it went to, else the nearest to its last x. */
-export function rootOfSolve(
-  solve: Pick<SolveRecord, 'nearest'>,
-  suiteCase: SuiteCase,
-  lastX: number,
-): number | null {
-  if (solve.nearest !== null && suiteCase.roots[solve.nearest] !== undefined) return solve.nearest;
-  const allowed = suiteCase.roots.flatMap((root, index) => (root.allowed ? [{ root, index }] : []));
-  const candidates = allowed.length > 0 ? allowed : suiteCase.roots.map((root, index) => ({ root, index }));
-  const near = nearestRoot(
-    lastX,
-    candidates.map(({ root }) => rootReference(root.value)),
-  );
-  return candidates[near?.index ?? 0]?.index ?? null;
 }
 
 /** The picture of a solve from its record, its case and its path. */

@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { comparisonView, pairPage } from '../../shared/schemas/comparisons.ts';
 import { problem } from '../../shared/schemas/problem.ts';
 import type { SolveRecord } from '../../shared/schemas/solve.ts';
+import { solveStripList } from '../../shared/schemas/strips.ts';
 import { makeBuildFolder, openTestApp, seedLibrary } from '../helpers/app.ts';
 import { createFakeMeasuring } from '../helpers/app-fake-measuring.ts';
 import { buildRevision, buildSolver } from '../helpers/builders.ts';
@@ -182,5 +183,28 @@ describe('GET /api/comparisons/pairs', () => {
       .expect(200);
     const { items } = pairPage.parse(answer.body);
     expect(items.map((pair) => [pair.solver, pair.formerly])).toEqual(Array(3).fill(['renamed', 'old']));
+  });
+});
+
+describe('GET /api/strips', () => {
+  it('gives strips of solves of several runs in the order asked for, and leaves out what is not there', async () => {
+    const { app, before, after } = await twoRuns();
+    const [first] = app.services.solves.list(before.id, { limit: 1, sort: 'case', direction: 'up' }).items;
+    const [second] = app.services.solves.list(after.id, { limit: 1, sort: 'case', direction: 'up' }).items;
+    const answer = await request(app.app)
+      .get('/api/strips')
+      .query({ solves: `${second?.id},999999,${first?.id}` })
+      .expect(200);
+    const { items } = solveStripList.parse(answer.body);
+    expect(items.map((item) => item.solve)).toEqual([second?.id, first?.id]);
+    const path = app.services.solves.readPath(first?.id ?? 0);
+    expect(items[1]?.events).toHaveLength(path?.events.length ?? -1);
+  });
+
+  it('refuses a list that is none, or too long', async () => {
+    const { app } = await twoRuns();
+    for (const solves of ['1,x', '', Array.from({ length: 201 }, (_, i) => i + 1).join(',')]) {
+      await request(app.app).get('/api/strips').query({ solves }).expect(400);
+    }
   });
 });

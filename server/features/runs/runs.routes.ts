@@ -2,17 +2,24 @@ import { Router } from 'express';
 import { z } from 'zod';
 import { rowId } from '../../../shared/schemas/paging.ts';
 import { runsQuery, solvesQuery, startRunBody } from '../../../shared/schemas/runs.ts';
+import { stripsQuery } from '../../../shared/schemas/strips.ts';
 import { sendEvents } from '../../http/event-stream.ts';
 import { parseBody, parseRequest } from '../../http/parse-request.ts';
 import { actorOf } from '../../http/session.ts';
 import type { EventBus } from '../../jobs/event-bus.ts';
 import type { RunsService } from './runs.service.ts';
 import type { SolvesService } from './solves.service.ts';
+import type { StripsService } from './strips.service.ts';
 
 const byId = z.object({ run: rowId });
 const bySolve = z.object({ solve: rowId });
 
-export function runsRoutes(runs: RunsService, solves: SolvesService, bus: EventBus): Router {
+export function runsRoutes(
+  runs: RunsService,
+  solves: SolvesService,
+  strips: StripsService,
+  bus: EventBus,
+): Router {
   const router = Router();
   router.get('/runs', (request, response) => {
     response.json(runs.list(parseRequest(runsQuery, request.query, 'query')));
@@ -36,6 +43,10 @@ export function runsRoutes(runs: RunsService, solves: SolvesService, bus: EventB
   router.get('/runs/:run/solves', (request, response) => {
     const { run } = parseRequest(byId, request.params, 'address');
     response.json(solves.list(run, parseRequest(solvesQuery, request.query, 'query')));
+  });
+  router.get('/strips', (request, response) => {
+    const { solves: ids } = parseRequest(stripsQuery, request.query, 'query');
+    response.json({ items: strips.read(ids) });
   });
   router.get('/solves/:solve', (request, response) => {
     response.json(solves.get(parseRequest(bySolve, request.params, 'address').solve));

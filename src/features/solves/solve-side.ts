@@ -1,10 +1,11 @@
 import { correctDigits } from '../../../shared/numerics/digits.ts';
 import { repeatsOf } from '../../../shared/numerics/query-check.ts';
+import { rootOfSolve } from '../../../shared/numerics/root-of-solve.ts';
 import { rootReference } from '../../../shared/numerics/root-reference.ts';
 import type { SuiteCase } from '../../../shared/schemas/case.ts';
 import { type Path, type PathEvent, pathFromFile } from '../../../shared/schemas/path.ts';
 import type { SolveDetail } from '../../../shared/schemas/runs.ts';
-import { pictureOfSolve, rootOfSolve, type SolvePicture } from '../../lib/strip-of-solve.ts';
+import { pictureOfSolve, type SolvePicture } from '../../lib/strip-of-solve.ts';
 
 /** One evaluation as the path table shows it. */
 export interface PathLine {
