@@ -11,6 +11,8 @@ import { describeEnvironment } from './runner/environment.ts';
 export interface OpenServicesOptions {
   databaseFile: string;
   lanes: number;
+  /** Whether requests may name folders and repositories of this machine. */
+  allowsLocalPaths?: boolean;
   onJobError: ServicesOptions['onJobError'];
   /** Left out where a process only looks, and for tests that bring suites of their own. */
   hasBuiltInSuites?: boolean;
@@ -30,6 +32,7 @@ export function openServices(options: OpenServicesOptions): { client: DatabaseCl
     readManifest,
     environment: describeEnvironment('unconfined'),
     lanes: options.lanes,
+    allowsLocalPaths: options.allowsLocalPaths ?? false,
     onJobError: options.onJobError,
   });
   if (options.hasBuiltInSuites ?? true) loadBuiltInSuites(services.suites);

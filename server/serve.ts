@@ -31,6 +31,7 @@ export async function serve(options: ServeOptions): Promise<RunningServer> {
   const { client, services } = openServices({
     databaseFile: config.databaseFile,
     lanes: config.lanes,
+    allowsLocalPaths: config.allowsLocalPaths,
     onJobError: (job, error) => logger.error({ err: error, job: job.id, subject: job.subject }, 'job failed'),
   });
   const server = createServer();
@@ -50,6 +51,9 @@ export async function serve(options: ServeOptions): Promise<RunningServer> {
   server.on('request', app);
   await listen(server, config);
   services.jobRunner.start();
+  services.buildPreviews
+    .sweep()
+    .catch((error: unknown) => logger.warn({ err: error }, 'files that nothing needs were not removed'));
 
   async function close(): Promise<void> {
     const closed = new Promise<void>((resolve) => server.close(() => resolve()));

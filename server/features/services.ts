@@ -1,6 +1,8 @@
+import path from 'node:path';
 import { matchNames } from '../../shared/comparison/pair.ts';
 import type { Environment } from '../../shared/schemas/measurement.ts';
 import { solveKey } from '../../shared/schemas/solve.ts';
+import { createBuildStore } from '../builds/build-store.ts';
 import type { DatabaseClient } from '../db/client.ts';
 import { type Clock, systemClock } from '../jobs/clock.ts';
 import { createEventBus } from '../jobs/event-bus.ts';
@@ -9,7 +11,12 @@ import { createQueue } from '../jobs/queue.ts';
 import { createAllowancesService } from './allowances/allowances.service.ts';
 import { createAuditService } from './audit/audit.service.ts';
 import type { ReadManifest } from './builds/build-folder.ts';
+import { createBuildLogsRepo } from './builds/build-logs.repo.ts';
+import { createBuildLogsService } from './builds/build-logs.service.ts';
+import { createBuildPreviewsService } from './builds/build-previews.service.ts';
+import { createBuildsRepo } from './builds/builds.repo.ts';
 import { createBuildsService } from './builds/builds.service.ts';
+import { createPrepareJob, prepareMs } from './builds/prepare-job.ts';
 import { loadReferenceSide, loadRunSide } from './comparisons/comparable.ts';
 import { createComparisonsService } from './comparisons/comparisons.service.ts';
 import { createLibrariesService } from './libraries/libraries.service.ts';
@@ -24,6 +31,7 @@ import { createRunsService } from './runs/runs.service.ts';
 import { createSolveListRepo } from './runs/solve-list.repo.ts';
 import { createSolvesRepo } from './runs/solves.repo.ts';
 import { createSolvesService } from './runs/solves.service.ts';
+import { createStripsService } from './runs/strips.service.ts';
 import { createSolversService } from './solvers/solvers.service.ts';
 import { createSuitesService } from './suites/suites.service.ts';
 
@@ -34,6 +42,12 @@ export interface ServicesOptions {
   /** Where this process measures, and with what. */
   environment: Environment;
   lanes: number;
+  /** Where the files of builds are kept; beside the database where it is left out. */
+  dataFolder?: string;
+  /** Whether requests may name folders and repositories of this machine; not, where it is left out. */
+  allowsLocalPaths?: boolean;
+  /** For preparing one build. */
+  prepareMs?: number;
   onJobError: JobRunnerOptions['onError'];
   clock?: Clock;
   pollMs?: number;
@@ -54,7 +68,29 @@ export function createServices(options: ServicesOptions) {
   const audit = createAuditService(db, clock);
   const libraries = createLibrariesService({ ...base, audit });
   const solvers = createSolversService(db, libraries);
-  const builds = createBuildsService({ ...base, audit, libraries, readManifest: options.readManifest });
+  const store = createBuildStore(options.dataFolder ?? path.dirname(client.sqlite.name));
+  const { readManifest } = options;
+  const allowsLocalPaths = options.allowsLocalPaths ?? false;
+  const buildPreviews = createBuildPreviewsService({
+    ...base,
+    libraries,
+    readManifest,
+    store,
+    allowsLocalPaths,
+  });
+  const wakeRunner = () => jobRunner.wake();
+  const builds = createBuildsService({
+    ...base,
+    audit,
+    libraries,
+    readManifest,
+    previews: buildPreviews,
+    store,
+    queue,
+    wakeRunner,
+  });
+  const logs = createBuildLogsRepo(client);
+  const buildLogs = createBuildLogsService({ logs, builds });
   const suites = createSuitesService({ ...base, audit });
   const allowances = createAllowancesService({ ...base, audit, libraries });
 
@@ -83,7 +119,7 @@ export function createServices(options: ServicesOptions) {
     lanes: options.lanes,
     currentReference: references.current,
     requireReference: references.requireFor,
-    wakeRunner: () => jobRunner.wake(),
+    wakeRunner,
     abortRun: (id) => jobRunner.abortSubject('run', id),
   });
   const solves = createSolvesService({
@@ -91,6 +127,12 @@ export function createServices(options: ServicesOptions) {
     runSolves,
     solves: solvesRepo,
     lists: createSolveListRepo(client),
+    decodePath: measuring.decodePath,
+  });
+  const strips = createStripsService({
+    runs,
+    runSolves,
+    solves: solvesRepo,
     decodePath: measuring.decodePath,
   });
 
@@ -116,6 +158,16 @@ export function createServices(options: ServicesOptions) {
   const jobRunner = createJobRunner({
     queue,
     handlers: {
+      prepare: createPrepareJob({
+        client,
+        queue,
+        bus,
+        builds: createBuildsRepo(db),
+        logs,
+        libraries,
+        store,
+        timeLimitMs: options.prepareMs ?? prepareMs,
+      }),
       run: createRunJob({
         client,
         clock,
@@ -140,6 +192,8 @@ export function createServices(options: ServicesOptions) {
     libraries,
     solvers,
     builds,
+    buildPreviews,
+    buildLogs,
     suites,
     allowances,
     references,
@@ -147,6 +201,7 @@ export function createServices(options: ServicesOptions) {
     runs,
     solves,
     runSolves,
+    strips,
     bus,
     queue,
     jobRunner,

@@ -13,6 +13,11 @@ export const leaseMs = 15_000;
 /** Claims in a row that brought nothing before a job is given up: it may be what kills the server. */
 export const maxAttempts = 20;
 
+/** A run whose build another process is still preparing, or is about to, waits for it. */
+const isBeingPrepared = `(j.kind = 'run' AND EXISTS (
+  SELECT 1 FROM runs JOIN builds ON builds.id = runs.build_id
+  WHERE runs.id = j.subject AND builds.state IN ('waiting', 'preparing')))`;
+
 /** The work is no longer this process's own: its lease ran out, or it was cancelled. */
 export class LeaseLost extends Error {
   constructor(job: number) {
@@ -31,7 +36,8 @@ export function createQueue(client: DatabaseClient, clock: Clock, owner = create
   // Raw, because claims and heartbeats are the two statements that must each be one and atomic.
   const claimOne = client.sqlite.prepare<[string, number], { id: number }>(
     `UPDATE jobs SET status = 'running', owner = ?, lease_until = ?, attempts = attempts + 1
-     WHERE id = (SELECT id FROM jobs WHERE status = 'queued' ORDER BY id LIMIT 1) AND status = 'queued'
+     WHERE id = (SELECT id FROM jobs AS j WHERE status = 'queued' AND NOT ${isBeingPrepared} ORDER BY id LIMIT 1)
+       AND status = 'queued'
      RETURNING id`,
   );
   const renew = client.sqlite.prepare<[number, number, string]>(

@@ -1,17 +1,15 @@
-import { type ChildProcess, execFile, spawn } from 'node:child_process';
+import { execFile, spawn } from 'node:child_process';
 import { randomBytes } from 'node:crypto';
-import { closeSync, constants, mkdirSync, mkdtempSync, openSync, readSync, rmSync, writeSync } from 'node:fs';
+import { closeSync, constants, openSync, readSync, rmSync, writeSync } from 'node:fs';
 import { Socket } from 'node:net';
-import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { promisify } from 'node:util';
 import { searchPath } from '../config.ts';
 import { adapterEnvironment, describeExit, type Exit, shellLine } from './adapter-environment.ts';
-import { GUARDIAN_SCRIPT } from './guardian-script.ts';
-import { findLeftovers, isGroupAlive, signalGroup, signalProcess } from './leftovers.ts';
+import { endGroup, guardGroup, newMark, releaseGroup, scratchFolder } from './guardian.ts';
 import { LogTail } from './log-tail.ts';
 
-/** The only file that starts processes: adapters, and the guardian that outlives Tallyroot just long enough. */
+/** Starts adapters. Besides the guardian and the lines that prepare a build, nothing else starts processes here. */
 
 const LOG_LIMIT_BYTES = 64 * 1024;
 const { O_NONBLOCK, O_RDONLY, O_RDWR, O_WRONLY } = constants;
@@ -25,43 +23,6 @@ export interface StartOptions {
   /** From SIGTERM to SIGKILL. */
   killAfterMs: number;
   onLog?: (text: string) => void;
-}
-
-const ownMark = randomBytes(12).toString('hex');
-let startCount = 0;
-let scratchRoot: string | null = null;
-let guardian: ChildProcess | null = null;
-const groups = new Set<number>();
-
-function scratchFolder(): string {
-  scratchRoot ??= mkdtempSync(join(tmpdir(), 'tallyroot-'));
-  startCount += 1;
-  const folder = join(scratchRoot, String(startCount));
-  mkdirSync(join(folder, 'home'), { recursive: true });
-  return folder;
-}
-
-/** Told about each process group; ends them all when Tallyroot is gone, also after kill -9. */
-function tellGuardian(line: string): void {
-  if (!guardian) {
-    const child = spawn('/bin/sh', ['-c', GUARDIAN_SCRIPT, 'guardian', ownMark, scratchRoot ?? ''], {
-      stdio: ['pipe', 'ignore', 'ignore'],
-      detached: true,
-      cwd: '/',
-      env: { PATH: searchPath },
-    });
-    child.on('exit', () => {
-      if (guardian === child) guardian = null;
-    });
-    child.on('error', () => undefined);
-    child.stdin.on('error', () => undefined);
-    child.unref();
-    const { stdin } = child;
-    if (stdin instanceof Socket) stdin.unref();
-    guardian = child;
-    for (const group of groups) stdin.write(`add ${group}\n`);
-  }
-  guardian.stdin?.write(line);
 }
 
 /** Named pipes of one adapter, opened so that no open can block, and the ends that Tallyroot keeps. */
@@ -142,7 +103,7 @@ export class AdapterProcess {
   private constructor(options: StartOptions, folder: string, pipes: Pipes) {
     this.#folder = folder;
     this.#killAfterMs = options.killAfterMs;
-    this.#mark = `${ownMark}.${startCount}.${randomBytes(4).toString('hex')}`;
+    this.#mark = newMark();
     this.wakeToken = Buffer.from(`\0${randomBytes(12).toString('hex')}\0`);
     this.write = pipes.write;
     this.read = pipes.read;
@@ -159,10 +120,7 @@ export class AdapterProcess {
     });
     for (const end of [pipes.childIn, pipes.childOut, pipes.childError]) closeSync(end);
     this.group = child.pid ?? 0;
-    if (this.group > 0) {
-      tellGuardian(`add ${this.group}\n`);
-      groups.add(this.group);
-    }
+    guardGroup(this.group);
     this.exited = new Promise((resolve) => {
       const finish = (exit: Exit): void => {
         this.#exit ??= exit;
@@ -218,23 +176,9 @@ export class AdapterProcess {
 
   async #end(): Promise<void> {
     if (this.group > 0) {
-      signalGroup(this.group, 'SIGTERM');
-      const from = performance.now();
-      for (let pauseMs = 1; isGroupAlive(this.group); pauseMs = Math.min(2 * pauseMs, 25)) {
-        if (performance.now() - from > this.#killAfterMs) break;
-        await delay(pauseMs);
-      }
-      signalGroup(this.group, 'SIGKILL');
-      // What is killed may just have started something else: look until nothing is found.
-      for (let round = 0; round < 50; round += 1) {
-        const left = findLeftovers(this.group, this.#mark);
-        if (left.length === 0) break;
-        for (const pid of left) signalProcess(pid, 'SIGKILL');
-        await delay(2);
-      }
+      await endGroup(this.group, this.#mark, this.#killAfterMs);
       await this.exited;
-      groups.delete(this.group);
-      tellGuardian(`drop ${this.group}\n`);
+      releaseGroup(this.group);
     }
     await Promise.race([this.#logEnded, delay(200)]);
     this.#logStream.destroy();

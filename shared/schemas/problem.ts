@@ -14,6 +14,14 @@ export const problemCodes = [
   'unavailable',
 ] as const;
 
+/** One thing that is wrong in an input; line and column from 1. */
+export const issue = z.object({
+  path: z.string().optional(),
+  line: z.int().optional(),
+  column: z.int().optional(),
+  message: z.string(),
+});
+
 /** Problem details (RFC 9457) as every error answer carries them. */
 export const problem = z.object({
   type: z.string(),
@@ -22,15 +30,6 @@ export const problem = z.object({
   detail: z.string(),
   code: z.enum(problemCodes),
   requestId: z.string(),
-  issues: z
-    .array(
-      z.object({
-        path: z.string().optional(),
-        line: z.int().optional(),
-        column: z.int().optional(),
-        message: z.string(),
-      }),
-    )
-    .optional(),
+  issues: z.array(issue).optional(),
 });
 export type Problem = z.infer<typeof problem>;

@@ -4,10 +4,10 @@ import path from 'node:path';
 import type { Express } from 'express';
 import { pino } from 'pino';
 import { afterAll } from 'vitest';
+import { localActor } from '../../server/actor.ts';
 import { createApp } from '../../server/app.ts';
 import { type DatabaseClient, openDatabase } from '../../server/db/client.ts';
 import { migrateDatabase } from '../../server/db/migrate.ts';
-import { localActor } from '../../server/actor.ts';
 import { createServices, type Services, type ServicesOptions } from '../../server/features/services.ts';
 import { recipe } from '../../shared/schemas/builds.ts';
 import type { SolverDeclaration } from '../../shared/schemas/solver.ts';
@@ -71,7 +71,9 @@ const open = new Set<TestApp>();
 
 /** The real application on a database of its own; only the measuring is a stand-in unless one is given. */
 export function openTestApp(
-  given: { measuring?: FakeMeasuring; file?: string } & Partial<Pick<ServicesOptions, 'clock'>> = {},
+  given: { measuring?: FakeMeasuring; file?: string } & Partial<
+    Pick<ServicesOptions, 'clock' | 'readManifest' | 'allowsLocalPaths' | 'prepareMs'>
+  > = {},
 ): TestApp {
   const file = given.file ?? freshDatabaseFile();
   const client = openDatabase(file);
@@ -80,9 +82,12 @@ export function openTestApp(
   const services = createServices({
     client,
     measuring,
-    readManifest: (text) => recipe.parse(JSON.parse(text)),
+    readManifest: given.readManifest ?? ((text) => recipe.parse(JSON.parse(text))),
     environment: testEnvironment,
     lanes: 1,
+    dataFolder: `${file}.files`,
+    allowsLocalPaths: given.allowsLocalPaths ?? true,
+    ...(given.prepareMs === undefined ? {} : { prepareMs: given.prepareMs }),
     onJobError: (_job, error) => jobErrors.push(error),
     pollMs: 20,
     ...(given.clock ? { clock: given.clock } : {}),

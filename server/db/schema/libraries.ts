@@ -1,6 +1,8 @@
 import { sql } from 'drizzle-orm';
 import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
-import { recipe } from '../../../shared/schemas/builds.ts';
+import { z } from 'zod';
+import { buildSources, buildStates, logKinds, recipe } from '../../../shared/schemas/builds.ts';
+import { issue } from '../../../shared/schemas/problem.ts';
 import { solverDeclaration } from '../../../shared/schemas/solver.ts';
 import { json, time } from '../columns.ts';
 
@@ -18,7 +20,17 @@ export const libraries = sqliteTable(
   (table) => [uniqueIndex('libraries_slug').on(table.slug)],
 );
 
-/** A build never changes once registered, but for the folder when its checkout has moved. */
+const sourceColumns = {
+  address: text('address'),
+  ref: text('ref'),
+  commit: text('commit'),
+  subject: text('subject'),
+  contentHash: text('content_hash'),
+  /** Where its files lie as they came, in the store of sources; null for a folder, which is used in place. */
+  sourceKey: text('source_key'),
+};
+
+/** What a build is made of never changes; its state does, and its folder where it is prepared anew or has moved. */
 export const builds = sqliteTable(
   'builds',
   {
@@ -27,12 +39,16 @@ export const builds = sqliteTable(
       .notNull()
       .references(() => libraries.id),
     label: text('label').notNull(),
-    commit: text('commit'),
-    source: text('source', { enum: ['folder'] }).notNull(),
+    source: text('source', { enum: buildSources }).notNull(),
+    ...sourceColumns,
     folder: text('folder').notNull(),
     recipe: json('recipe', recipe).notNull(),
     /** sha-256, hex, of the manifest's text. */
     manifestHash: text('manifest_hash').notNull(),
+    state: text('state', { enum: buildStates }).notNull().default('ready'),
+    reason: text('reason'),
+    /** Whether the beginning of its log is no longer kept. */
+    isLogCut: integer('is_log_cut', { mode: 'boolean' }).notNull().default(false),
     createdAt: time('created_at').notNull(),
     createdBy: text('created_by').notNull(),
   },
@@ -40,8 +56,51 @@ export const builds = sqliteTable(
     uniqueIndex('builds_library_commit')
       .on(table.libraryId, table.commit)
       .where(sql`${table.commit} is not null`),
+    uniqueIndex('builds_library_content')
+      .on(table.libraryId, table.contentHash)
+      .where(sql`${table.contentHash} is not null`),
     index('builds_library').on(table.libraryId, table.id),
   ],
+);
+
+/** What somebody has been shown and may register until it expires. */
+export const buildPreviews = sqliteTable(
+  'build_previews',
+  {
+    id: integer('id').primaryKey({ autoIncrement: true }),
+    libraryId: integer('library_id')
+      .notNull()
+      .references(() => libraries.id),
+    source: text('source', { enum: buildSources }).notNull(),
+    ...sourceColumns,
+    label: text('label').notNull(),
+    /** The folder in place; null where `sourceKey` says where the files are. */
+    folder: text('folder'),
+    recipe: json('recipe', recipe),
+    issues: json('issues', z.array(issue)).notNull(),
+    manifestHash: text('manifest_hash'),
+    submodules: json('submodules', z.array(z.string())).notNull(),
+    /** The build that was made of it. */
+    buildId: integer('build_id').references(() => builds.id),
+    createdAt: time('created_at').notNull(),
+    createdBy: text('created_by').notNull(),
+    expiresAt: time('expires_at').notNull(),
+  },
+  (table) => [index('build_previews_expiry').on(table.expiresAt)],
+);
+
+/** What preparing a build wrote, in pieces; the oldest are dropped where it becomes too much. */
+export const buildLogs = sqliteTable(
+  'build_logs',
+  {
+    id: integer('id').primaryKey({ autoIncrement: true }),
+    buildId: integer('build_id')
+      .notNull()
+      .references(() => builds.id),
+    kind: text('kind', { enum: logKinds }).notNull(),
+    text: text('text').notNull(),
+  },
+  (table) => [index('build_logs_build').on(table.buildId, table.id)],
 );
 
 /** The current declaration of each solver that a library has ever declared. */

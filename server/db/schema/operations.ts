@@ -8,7 +8,7 @@ export const jobs = sqliteTable(
   'jobs',
   {
     id: integer('id').primaryKey({ autoIncrement: true }),
-    kind: text('kind', { enum: ['run'] }).notNull(),
+    kind: text('kind', { enum: ['run', 'prepare'] }).notNull(),
     subject: integer('subject').notNull(),
     status: text('status', { enum: ['queued', 'running', 'done', 'failed', 'cancelled'] }).notNull(),
     /** How often it was claimed since it last stored something. */

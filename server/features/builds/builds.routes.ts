@@ -1,6 +1,6 @@
 import { Router } from 'express';
 import { z } from 'zod';
-import { registerBuildBody } from '../../../shared/schemas/builds.ts';
+import { registerBuildBody, registerPreviewBody } from '../../../shared/schemas/builds.ts';
 import { pageQuery, rowId, slug } from '../../../shared/schemas/paging.ts';
 import { parseBody, parseRequest } from '../../http/parse-request.ts';
 import { actorOf } from '../../http/session.ts';
@@ -17,8 +17,10 @@ export function buildsRoutes(builds: BuildsService): Router {
   });
   router.post('/libraries/:library/builds', async (request, response) => {
     const { library } = parseRequest(inLibrary, request.params, 'address');
-    const body = parseBody(registerBuildBody, request);
-    const { build, isNew } = await builds.registerFolder(actorOf(response), library, body);
+    const actor = actorOf(response);
+    const { build, isNew } = isOfPreview(request.body)
+      ? await builds.registerPreview(actor, library, parseBody(registerPreviewBody, request))
+      : await builds.registerNamedFolder(actor, library, parseBody(registerBuildBody, request));
     response
       .status(isNew ? 201 : 200)
       .location(`/api/builds/${build.id}`)
@@ -28,4 +30,8 @@ export function buildsRoutes(builds: BuildsService): Router {
     response.json(builds.get(parseRequest(byId, request.params, 'address').build));
   });
   return router;
+}
+
+function isOfPreview(body: unknown): boolean {
+  return typeof body === 'object' && body !== null && 'preview' in body;
 }

@@ -42,6 +42,11 @@ export function createLibrariesService(deps: {
       if (!row) throw missing(slug);
       return presentLibrary(row);
     },
+    slugOf(id: number): string {
+      const row = repo.findById(id);
+      if (!row) throw new AppError('not_found', `There is no library ${id}.`);
+      return row.slug;
+    },
     /** The row itself, for other services. */
     require(slug: string): LibraryRow {
       const row = repo.find(slug);

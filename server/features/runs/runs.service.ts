@@ -115,6 +115,7 @@ export function createRunsService(deps: RunsServiceDeps) {
 
   function start(actor: Actor, body: StartRunBody): RunView {
     const build = deps.builds.require(body.build);
+    deps.builds.requireUsable(build);
     const { suite, revision } = deps.suites.requireRevision(body.suite, body.revision);
     const declarations = chooseSolvers(build, body.solvers);
     const base = chooseBase(body, build.libraryId, suite.id);
