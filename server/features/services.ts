@@ -17,9 +17,13 @@ import { createBuildPreviewsService } from './builds/build-previews.service.ts';
 import { createBuildsRepo } from './builds/builds.repo.ts';
 import { createBuildsService } from './builds/builds.service.ts';
 import { createPrepareJob, prepareMs } from './builds/prepare-job.ts';
+import { createCodeDiffsService } from './comparisons/code-diffs.service.ts';
 import { loadReferenceSide, loadRunSide } from './comparisons/comparable.ts';
 import { createComparisonsService } from './comparisons/comparisons.service.ts';
+import { createExportsService } from './comparisons/exports.service.ts';
+import { createProfilesService } from './comparisons/profiles.service.ts';
 import { createLibrariesService } from './libraries/libraries.service.ts';
+import { createTrendsService } from './libraries/trends.service.ts';
 import { createReferencesRepo } from './references/references.repo.ts';
 import { createReferencesService, platformOf } from './references/references.service.ts';
 import type { BaseSolves } from './runs/confirm-run.ts';
@@ -137,6 +141,10 @@ export function createServices(options: ServicesOptions) {
   });
 
   const comparisons = createComparisonsService({ runs, runSolves, references, allowances });
+  const exports = createExportsService({ comparisons, allowances });
+  const codeDiffs = createCodeDiffsService({ runs, builds, references, store });
+  const profiles = createProfilesService({ runs, runSolves, comparisons });
+  const trends = createTrendsService({ client, libraries, suites, runs: runsRepo });
 
   const sides = { runs, runSolves, references };
   /** What a run is compared with, under the names that its own build has for the solvers. */
@@ -198,6 +206,10 @@ export function createServices(options: ServicesOptions) {
     allowances,
     references,
     comparisons,
+    exports,
+    codeDiffs,
+    profiles,
+    trends,
     runs,
     solves,
     runSolves,

@@ -18,6 +18,9 @@ const isBeingPrepared = `(j.kind = 'run' AND EXISTS (
   SELECT 1 FROM runs JOIN builds ON builds.id = runs.build_id
   WHERE runs.id = j.subject AND builds.state IN ('waiting', 'preparing')))`;
 
+export const nextJobSql = `
+  SELECT id FROM jobs AS j WHERE status = 'queued' AND NOT ${isBeingPrepared} ORDER BY id LIMIT 1`;
+
 /** The work is no longer this process's own: its lease ran out, or it was cancelled. */
 export class LeaseLost extends Error {
   constructor(job: number) {
@@ -36,7 +39,7 @@ export function createQueue(client: DatabaseClient, clock: Clock, owner = create
   // Raw, because claims and heartbeats are the two statements that must each be one and atomic.
   const claimOne = client.sqlite.prepare<[string, number], { id: number }>(
     `UPDATE jobs SET status = 'running', owner = ?, lease_until = ?, attempts = attempts + 1
-     WHERE id = (SELECT id FROM jobs AS j WHERE status = 'queued' AND NOT ${isBeingPrepared} ORDER BY id LIMIT 1)
+     WHERE id = (${nextJobSql})
        AND status = 'queued'
      RETURNING id`,
   );

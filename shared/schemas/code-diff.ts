@@ -63,3 +63,14 @@ export const codeDiff = z.strictObject({
   linesLeftOut: count,
 });
 export type CodeDiff = z.infer<typeof codeDiff>;
+
+const comparedBuild = z.strictObject({ id: z.int(), label: z.string(), commit: z.string().nullable() });
+
+/** What changed in the source between the builds of the two sides of a comparison. */
+export const codeDiffView = codeDiff.extend({
+  reference: comparedBuild,
+  candidate: comparedBuild,
+  /** False where a folder of this machine was read as it is now, which may not be as it was when it was run. */
+  isOfRecord: z.boolean(),
+});
+export type CodeDiffView = z.infer<typeof codeDiffView>;

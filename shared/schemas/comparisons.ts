@@ -22,6 +22,20 @@ const oneReference = { message: 'give either reference (a run) or revision (of t
 export const comparisonQuery = z.strictObject(sides).refine(hasOneReference, oneReference);
 export type ComparisonQuery = z.infer<typeof comparisonQuery>;
 
+export const exportFormats = ['csv', 'json', 'markdown', 'junit'] as const;
+export type ExportFormat = (typeof exportFormats)[number];
+
+export const exportQuery = z
+  .strictObject({ ...sides, format: z.enum(exportFormats) })
+  .refine(hasOneReference, oneReference);
+export type ExportQuery = z.infer<typeof exportQuery>;
+
+/** `solver` left out: all of them together. */
+export const comparisonProfileQuery = z
+  .strictObject({ ...sides, solver: solverName.optional() })
+  .refine(hasOneReference, oneReference);
+export type ComparisonProfileQuery = z.infer<typeof comparisonProfileQuery>;
+
 export const pairSorts = ['gravity', 'suite', 'difference', 'digits'] as const;
 
 /** Repeated `change` parameters mean any of them; a pair counts with its gravest change and its others alike. */

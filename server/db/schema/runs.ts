@@ -62,6 +62,9 @@ export const runs = sqliteTable(
     index('runs_library').on(table.libraryId, table.id),
     index('runs_build').on(table.buildId, table.id),
     index('runs_suite').on(table.suiteId, table.id),
+    index('runs_finished')
+      .on(table.libraryId, table.suiteId, table.buildId, table.id)
+      .where(sql`${table.status} = 'finished'`),
     index('runs_status').on(table.status, table.id),
     foreignKey({ columns: [table.baseRunId], foreignColumns: [table.id] }),
   ],

@@ -3,6 +3,7 @@ import { createAllowancesRepo } from '../../../server/features/allowances/allowa
 import { createAuditRepo } from '../../../server/features/audit/audit.repo.ts';
 import { createBuildsRepo } from '../../../server/features/builds/builds.repo.ts';
 import { createLibrariesRepo } from '../../../server/features/libraries/libraries.repo.ts';
+import { trendRunsSql, trendSql } from '../../../server/features/libraries/trends.repo.ts';
 import {
   createReferencesRepo,
   entriesPageQuery,
@@ -11,6 +12,7 @@ import { createRunsRepo } from '../../../server/features/runs/runs.repo.ts';
 import { solveListSql } from '../../../server/features/runs/solve-list.repo.ts';
 import { createSolversRepo } from '../../../server/features/solvers/solvers.repo.ts';
 import { createSuitesRepo } from '../../../server/features/suites/suites.repo.ts';
+import { nextJobSql } from '../../../server/jobs/queue.ts';
 import { solveSorts } from '../../../shared/schemas/runs.ts';
 import { openTestApp } from '../../helpers/app.ts';
 
@@ -154,8 +156,17 @@ describe('query plans', () => {
   });
 
   it('claims a job by index', () => {
-    const text = planOf("SELECT id FROM jobs WHERE status = 'queued' ORDER BY id LIMIT 1", []);
-    expect(text).toMatch(/SEARCH jobs USING COVERING INDEX jobs_status \(status=\?\)/);
-    expect(text).not.toMatch(/TEMP B-TREE/);
+    const text = planOf(nextJobSql, []);
+    expect(text).toMatch(/SEARCH j USING INDEX jobs_status \(status=\?\)/);
+    expect(text).not.toMatch(/TEMP B-TREE|SCAN/);
+  });
+
+  it('finds the runs of a trend and their solves by index', () => {
+    const runs = planOf(trendRunsSql, [1, 1, 8]);
+    expect(runs).toMatch(/SEARCH r USING COVERING INDEX runs_finished \(library_id=\? AND suite_id=\?\)/);
+    expect(runs).not.toMatch(/TEMP B-TREE|SCAN/);
+    const solves = planOf(trendSql, ['[1]']);
+    expect(solves).toMatch(/SEARCH s USING INDEX solves_key \(run_id=\? AND solver=\?\)/);
+    expect(solves).not.toMatch(/SCAN (s|cases|run_solvers|r)\b/);
   });
 });

@@ -1,0 +1,1 @@
+CREATE INDEX `runs_finished` ON `runs` (`library_id`,`suite_id`,`build_id`,`id`) WHERE "runs"."status" = 'finished';
