@@ -17,6 +17,7 @@ import { hostCheck, originCheck } from './http/origin-check.ts';
 import { requestId } from './http/request-id.ts';
 import { securityHeaders } from './http/security-headers.ts';
 import { session } from './http/session.ts';
+import { openapiRoutes } from './openapi/openapi.routes.ts';
 
 export interface AppDeps {
   services: Services;
@@ -55,6 +56,7 @@ function apiRouter(services: Services): Router {
   api.use(comparisonExtrasRoutes(services.exports, services.codeDiffs, services.profiles));
   api.use(trendsRoutes(services.trends));
   api.use(auditRoutes(services.audit));
+  api.use(openapiRoutes(services.environment.tallyroot));
   api.use(noSuchRoute);
   return api;
 }
