@@ -12,6 +12,7 @@ import { referencesRoutes } from './features/references/references.routes.ts';
 import { runsRoutes } from './features/runs/runs.routes.ts';
 import type { Services } from './features/services.ts';
 import { suitesRoutes } from './features/suites/suites.routes.ts';
+import { bodyLimit } from './http/body-limit.ts';
 import { errorHandler, noSuchRoute } from './http/error-handler.ts';
 import { hostCheck, originCheck } from './http/origin-check.ts';
 import { requestId } from './http/request-id.ts';
@@ -31,7 +32,7 @@ export interface AppDeps {
   site?: RequestHandler[];
 }
 
-const bodyLimit = '256kb';
+const bodyBytes = 256 * 1024;
 
 function apiRouter(services: Services): Router {
   const api = Router();
@@ -40,7 +41,8 @@ function apiRouter(services: Services): Router {
     next();
   });
   api.use(originCheck);
-  api.use(express.json({ limit: bodyLimit, strict: true, type: ['application/json'] }));
+  api.use(bodyLimit(bodyBytes));
+  api.use(express.json({ limit: bodyBytes, strict: true, type: ['application/json'] }));
   api.use(session);
   api.get('/about', (_request, response) => {
     response.json({ name: 'Tallyroot', environment: services.environment });

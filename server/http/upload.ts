@@ -20,6 +20,8 @@ export function receiveUpload(field: string, folder: () => string, maxBytes: num
   let receive: RequestHandler | undefined;
   return (request, response, next) => {
     if (!request.is('multipart/form-data')) return next();
+    // The form around the file takes a little as well.
+    if (Number(request.get('content-length') ?? 0) > maxBytes + mebibyte) throw tooLarge(maxBytes);
     receive ??= multer({
       dest: folder(),
       limits: { fileSize: maxBytes, files: 1, fields: 0, parts: 1, headerPairs: 20, fieldNameSize: 100 },
@@ -41,14 +43,15 @@ export async function dropUpload(request: Request): Promise<void> {
   if (request.file) await rm(request.file.path, { force: true });
 }
 
+function tooLarge(maxBytes: number, cause?: unknown): AppError {
+  return new AppError('too_large', `The archive is larger than ${maxBytes / mebibyte} MiB.`, { cause });
+}
+
 function toAppError(error: unknown, maxBytes: number): unknown {
   if (!(error instanceof MulterError)) {
     // The parser of forms throws plain errors for what is no form.
     return new AppError('invalid', 'This form cannot be read; it may have been cut short.', { cause: error });
   }
-  if (error.code === 'LIMIT_FILE_SIZE')
-    return new AppError('too_large', `The archive is larger than ${maxBytes / mebibyte} MiB.`, {
-      cause: error,
-    });
+  if (error.code === 'LIMIT_FILE_SIZE') return tooLarge(maxBytes, error);
   return new AppError('invalid', 'A form with one file and nothing else was expected.', { cause: error });
 }
