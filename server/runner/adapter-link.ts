@@ -74,7 +74,11 @@ export class AdapterLink {
     for (;;) {
       const event = this.#reader.next();
       if (event || this.#hasReadAll) return event;
+      // Nothing there is the usual case, and comes as an error: its stack is most of its cost.
+      const { stackTraceLimit } = Error;
+      Error.stackTraceLimit = 0;
       const count = this.#fill(this.#pipes.peek);
+      Error.stackTraceLimit = stackTraceLimit;
       if (count === 0) this.#hasReadAll = true;
       if (count <= 0) return null;
     }

@@ -24,7 +24,12 @@ export interface CaseTool {
   equation: Equation;
   evaluator: Evaluator;
   roots: JudgedRoot[];
+  /** Roots looked for on the spot, by where: builds of one library claim the same false ones again and again. */
+  found: Map<string, string | null>;
 }
+
+/** Searches kept a case; past that they are made anew. */
+const KEPT_SEARCHES = 500;
 
 /** Tools outlive a run, since the next build meets the same suite; the oldest go first. */
 const KEPT_TOOLS = 1000;
@@ -68,7 +73,7 @@ export function makeCaseTool(suiteCase: SuiteCase, equation: Equation): CaseTool
   const roots = suiteCase.roots.map(({ value, attainable, allowed }) => {
     return { ref: rootReference(value), attainable, allowed };
   });
-  return { suiteCase, equation, evaluator: compileDouble(equation, parameters), roots };
+  return { suiteCase, equation, evaluator: compileDouble(equation, parameters), roots, found: new Map() };
 }
 
 export interface RecordInput {
@@ -187,6 +192,16 @@ function isFarFromRoots({ f, df }: Evaluator, x: number, radius: number): boolea
   return isOneSign && Math.abs(y) > 10 * radius * Math.abs(df(x));
 }
 
+function searchNear(tool: CaseTool, x: number, radius: number): string | null {
+  if (isFarFromRoots(tool.evaluator, x, radius)) return null;
+  const where = `${x} ${radius}`;
+  const known = tool.found.get(where);
+  if (known !== undefined) return known;
+  const root = certifyNear(tool.equation, tool.suiteCase.parameters, x, radius);
+  if (tool.found.size < KEPT_SEARCHES) tool.found.set(where, root);
+  return root;
+}
+
 interface Judged {
   outcome: Outcome;
   remarks: Remark[];
@@ -205,10 +220,7 @@ function judge(input: RecordInput, claimed: number | null, residual: number | nu
         expectation,
         tolerance: solver.tolerance,
         residual,
-        certifyNear: (x, radius) =>
-          isFarFromRoots(tool.evaluator, x, radius)
-            ? null
-            : certifyNear(tool.equation, tool.suiteCase.parameters, x, radius),
+        certifyNear: (x, radius) => searchNear(tool, x, radius),
       });
     case 'fail': {
       const remarks: Remark[] = [];

@@ -5,6 +5,7 @@
 import { benchComparison } from './comparison.ts';
 import { benchEvaluator } from './evaluator.ts';
 import { benchInserts } from './inserts.ts';
+import { printRequests } from './requests.ts';
 import { benchWire, wireBounds } from './wire.ts';
 
 interface Line {
@@ -72,3 +73,6 @@ print(
     `${comparison.compareMs.toFixed(0)} ms, read ${comparison.bareReadMs.toFixed(0)} ms`,
   ),
 );
+
+// Fills a database of two million solves the first time, which takes minutes.
+if (process.argv.includes('--large')) await printRequests();

@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto';
-import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { type DatabaseClient, openDatabase } from '../../server/db/client.ts';
@@ -27,15 +27,20 @@ export interface BenchStore {
   client: DatabaseClient;
   services: Services;
   repo: SolvesRepo;
-  /** Starts a run that nobody works on, so that it can be filled by hand. */
-  newRun(): number;
+  /** Starts a run that nobody works on, so that it can be filled by hand; of the first build, or of another. */
+  newRun(build?: number): number;
+  newBuild(label: string): Promise<number>;
   solves(runId: number, variant: number): NewSolve[];
   close(): void;
 }
 
-/** A database with a library, a build of 20 solvers and a suite of 250 cases with four starts each. */
-export async function openBenchStore(): Promise<BenchStore> {
-  const folder = mkdtempSync(path.join(tmpdir(), 'tallyroot-bench-'));
+/**
+ * A database with a library, a build of 20 solvers and a suite of 250 cases with four starts each. In a folder that
+ * is given it is kept, and found again the next time.
+ */
+export async function openBenchStore(kept?: string): Promise<BenchStore> {
+  const folder = kept ?? mkdtempSync(path.join(tmpdir(), 'tallyroot-bench-'));
+  mkdirSync(folder, { recursive: true });
   const client = openDatabase(path.join(folder, 'bench.db'));
   migrateDatabase(client);
   const services = createServices({
@@ -52,16 +57,22 @@ export async function openBenchStore(): Promise<BenchStore> {
   const solvers = Array.from({ length: solverCount }, (_, index) => buildSolver({ name: `solver-${index}` }));
   const manifest = { library: 'Bench', prepare: [], adapter: 'true', environment: {}, solvers };
   writeFileSync(path.join(folder, 'tallyroot.yaml'), JSON.stringify(manifest));
-  services.libraries.create(actor, { slug: 'bench', name: 'Bench', description: '', homepage: null });
-  const revision = buildRevision({ id: 'bench', cases });
-  services.suites.addRevision(actor, { revision, source: '', builtIn: false, note: '' });
-  const { build } = await services.builds.registerFolder(actor, 'bench', { folder });
+  const newBuild = async (label: string): Promise<number> =>
+    (await services.builds.registerFolder(actor, 'bench', { folder, label })).build.id;
+  if (services.libraries.list({ limit: 1 }).items.length === 0) {
+    services.libraries.create(actor, { slug: 'bench', name: 'Bench', description: '', homepage: null });
+    const revision = buildRevision({ id: 'bench', cases });
+    services.suites.addRevision(actor, { revision, source: '', builtIn: false, note: '' });
+    await newBuild('first');
+  }
+  const first = services.builds.list('bench', { limit: 500 }).items.at(-1)?.id ?? 0;
 
   return {
     client,
     services,
     repo: createSolvesRepo(client),
-    newRun: () => services.runs.start(actor, { build: build.id, suite: 'bench', against: null }).id,
+    newBuild,
+    newRun: (build = first) => services.runs.start(actor, { build, suite: 'bench', against: null }).id,
     solves(runId, variant) {
       const { caseIdOf } = services.runSolves.keysOf(services.runs.requireRun(runId));
       return solvers.flatMap((solver, position) =>
@@ -92,7 +103,7 @@ export async function openBenchStore(): Promise<BenchStore> {
     },
     close() {
       client.close();
-      rmSync(folder, { recursive: true, force: true });
+      if (kept === undefined) rmSync(folder, { recursive: true, force: true });
     },
   };
 }

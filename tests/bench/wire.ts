@@ -3,7 +3,7 @@ import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { readSuiteFile, storedCertificates } from '../../server/cli/open-suite.ts';
+import { builtInSuites, readSuiteFile, storedCertificates } from '../../server/cli/open-suite.ts';
 import { prepareSuite } from '../../shared/suites/prepare.ts';
 import { readSuiteText } from '../../shared/suites/read-suite.ts';
 import { caseOf, measureWith, solverOf } from '../helpers/measuring.ts';
@@ -55,11 +55,12 @@ async function roundTrip(command: string, solver: string): Promise<number> {
   return (last.elapsedMs * 1000) / SPINS;
 }
 
-/** The two built-in suites of plain equations, as teams will run them. */
+/** Every built-in suite, as a team that takes them all would run them. */
 function wholeRunCases(): Parameters<typeof measureWith>[2] {
   const certificates = storedCertificates();
-  return ['brackets', 'open-starts'].flatMap((id) => {
-    return prepareSuite(readSuiteText(readSuiteFile(id)), certificates).cases;
+  return builtInSuites().flatMap((suite) => {
+    const { cases } = prepareSuite(readSuiteText(readSuiteFile(suite)), certificates);
+    return cases.map((one) => ({ ...one, id: `${suite}/${one.id}` }));
   });
 }
 
@@ -106,7 +107,7 @@ export async function benchWire(): Promise<WireBench> {
     for (let round = 0; round < ROUNDS; round += 1) {
       bare.push(Number(execFileSync(join(folder, 'ping-pong'), [String(SPINS)], { encoding: 'utf8' })));
       laneC.push(await roundTrip(adapterC, 'spin'));
-      laneNode.push(await roundTrip(adapterNode, 'endless'));
+      laneNode.push(await roundTrip(adapterNode, 'spin'));
       size = await wholeRun(adapterC, cases);
       runC.push(size.perEvaluation);
       runNode.push((await wholeRun(adapterNode, cases)).perEvaluation);

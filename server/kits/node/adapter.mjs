@@ -11,6 +11,9 @@ const pauseCell = new Int32Array(new SharedArrayBuffer(4));
 let buffer = Buffer.allocUnsafe(65536);
 let start = 0;
 let end = 0;
+// Lines that wait for no answer go out with the next one that does: a call less for each of them.
+let waiting = '';
+const WAITING_MOST = 8192;
 const answer = { y: 0, dy: 0 };
 
 /** Thrown out of an evaluation when the budget is used up, so that the solver unwinds. Do not keep it. */
@@ -37,6 +40,7 @@ export function serve({ name = '', solvers }) {
 
 /** A library that prints must not break the wire: what it prints goes to standard error. */
 function keepOutputForTheWire() {
+  process.on('exit', sendWaiting);
   globalThis.console = new Console(process.stderr, process.stderr);
   process.stdout.write = process.stderr.write.bind(process.stderr);
 }
@@ -115,11 +119,11 @@ function makeEvaluations(offers, state) {
 function step(x, low, high) {
   const bracket =
     low === undefined || high === undefined ? '' : ` ${formatNumber(low)} ${formatNumber(high)}`;
-  write(`step ${formatNumber(x)}${bracket}`);
+  keep(`step ${formatNumber(x)}${bracket}`);
 }
 
 function iterations(count) {
-  write(`iterations ${Math.trunc(count)}`);
+  keep(`iterations ${Math.trunc(count)}`);
 }
 
 /** False where `stop` came instead of an answer. */
@@ -165,7 +169,10 @@ function readLine() {
 }
 
 function fillBuffer() {
-  if (start > 0) {
+  if (start === end) {
+    start = 0;
+    end = 0;
+  } else if (start > 0) {
     buffer.copyWithin(0, start, end);
     end -= start;
     start = 0;
@@ -176,9 +183,30 @@ function fillBuffer() {
   return count > 0;
 }
 
+/** Writes a line, and before it those that were kept for it. */
 function write(line) {
-  const bytes = Buffer.from(`${line}\n`);
-  let at = 0;
+  const text = `${waiting}${line}\n`;
+  waiting = '';
+  send(text);
+}
+
+function keep(line) {
+  waiting += `${line}\n`;
+  if (waiting.length > WAITING_MOST) sendWaiting();
+}
+
+function sendWaiting() {
+  const text = waiting;
+  waiting = '';
+  if (text !== '') send(text);
+}
+
+/** A short text goes in one call, as it is; what the pipe does not take at once follows as bytes. */
+function send(text) {
+  const count = patiently(() => writeSync(1, text));
+  if (count >= text.length && count === Buffer.byteLength(text)) return;
+  const bytes = Buffer.from(text);
+  let at = count;
   while (at < bytes.length) at += patiently(() => writeSync(1, bytes, at, bytes.length - at));
 }
 

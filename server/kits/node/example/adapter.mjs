@@ -4,7 +4,7 @@ import { secant } from './secant.mjs';
 serve({
   name: 'example-roots 1.0',
   solvers: {
-    secant: (f, df, d2f, inputs, tolerance, tools) => {
+    secant: (f, _df, _d2f, inputs, tolerance, tools) => {
       const [x0, x1] = inputs.starts;
       // The nearest that this library accepts and that is not looser than what is asked.
       const relative = Math.max(tolerance.xrel, Number.EPSILON);
