@@ -143,7 +143,7 @@ export function createServices(options: ServicesOptions) {
   const comparisons = createComparisonsService({ runs, runSolves, references, allowances });
   const exports = createExportsService({ comparisons, allowances });
   const codeDiffs = createCodeDiffsService({ runs, builds, references, store });
-  const profiles = createProfilesService({ runs, runSolves, comparisons });
+  const profiles = createProfilesService({ runs, runSolves, solves: solvesRepo, comparisons });
   const trends = createTrendsService({ client, libraries, suites, runs: runsRepo });
 
   const sides = { runs, runSolves, references };

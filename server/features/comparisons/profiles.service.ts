@@ -4,8 +4,10 @@ import { type ProfileCosts, performanceProfiles } from '../../../shared/numerics
 import type { ComparisonProfileQuery } from '../../../shared/schemas/comparisons.ts';
 import type { ProfileView, RunProfileQuery } from '../../../shared/schemas/profiles.ts';
 import type { SolveRecord } from '../../../shared/schemas/solve.ts';
+import { outcomeCode } from '../../db/codes.ts';
 import type { RunSolves } from '../runs/run-solves.ts';
 import type { RunsService } from '../runs/runs.service.ts';
+import type { SolveCostRow, SolvesRepo } from '../runs/solves.repo.ts';
 import type { ComparisonsService } from './comparisons.service.ts';
 
 /** What one name did on one problem: its cost, null for a failure, undefined where that cannot be said. */
@@ -35,9 +37,15 @@ function viewOf(names: readonly string[], problems: readonly (readonly Cost[])[]
   };
 }
 
+function rowCost([, , outcome, evaluations, isRightlyRefused]: SolveCostRow): Cost {
+  if (isRightlyRefused === 1) return undefined;
+  if (outcome !== outcomeCode.solved) return null;
+  return evaluations > 0 ? evaluations : undefined;
+}
+
 /** The mean over its starts, and a failure where one of them failed. */
-function caseCost(solves: readonly SolveRecord[]): Cost {
-  const costs = solves.filter((solve) => solve.outcome !== 'not applicable').map(costOf);
+function caseCost(rows: readonly SolveCostRow[]): Cost {
+  const costs = rows.filter((row) => row[2] !== outcomeCode['not applicable']).map(rowCost);
   if (costs.length === 0 || costs.includes(undefined)) return undefined;
   if (costs.includes(null)) return null;
   return costs.reduce<number>((sum, cost) => sum + (cost ?? 0), 0) / costs.length;
@@ -46,6 +54,7 @@ function caseCost(solves: readonly SolveRecord[]): Cost {
 export function createProfilesService(deps: {
   runs: RunsService;
   runSolves: RunSolves;
+  solves: SolvesRepo;
   comparisons: ComparisonsService;
 }) {
   return {
@@ -73,15 +82,18 @@ export function createProfilesService(deps: {
       const unknown = query.solver?.find((name) => !all.includes(name));
       if (unknown !== undefined) throw new AppError('not_found', `Run ${id} has no solver “${unknown}”.`);
       const names = query.solver === undefined ? all : all.filter((name) => query.solver?.includes(name));
-      const byCase = new Map<string, Map<string, SolveRecord[]>>();
-      for (const solve of deps.runSolves.readAll(run, keys)) {
-        const ofCase = byCase.get(solve.case) ?? new Map<string, SolveRecord[]>();
-        byCase.set(solve.case, ofCase);
-        ofCase.set(solve.solver, [...(ofCase.get(solve.solver) ?? []), solve]);
+      const byKey = new Map<string, SolveCostRow[]>();
+      for (const row of deps.solves.readCosts(run.id)) {
+        const key = `${row[1]} ${row[0]}`;
+        const known = byKey.get(key);
+        if (known) known.push(row);
+        else byKey.set(key, [row]);
       }
+      const costIn = (caseId: number, name: string): Cost =>
+        caseCost(byKey.get(`${caseId} ${keys.positionOf.get(name)}`) ?? []);
       return viewOf(
         names,
-        [...byCase.values()].map((ofCase) => names.map((name) => caseCost(ofCase.get(name) ?? []))),
+        keys.cases.map(({ id: caseId }) => names.map((name) => costIn(caseId, name))),
       );
     },
   };

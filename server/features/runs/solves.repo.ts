@@ -25,6 +25,14 @@ export interface SteadyMark {
 
 export type SolveRow = [...SolveKeyRow, ...SolveValues];
 
+export type SolveCostRow = [
+  solver: number,
+  caseId: number,
+  outcome: number,
+  evaluations: number,
+  isRightlyRefused: number,
+];
+
 const columns = ['id', 'solver', 'case_id', 'start', ...solveColumns];
 /** The select list of a `SolveRow`, with the table's name before each. */
 export const solveSelect = columns.map((column) => `solves.${column}`).join(', ');
@@ -59,6 +67,12 @@ export function createSolvesRepo(client: DatabaseClient) {
   const keys = sqlite
     .prepare<[number], [solver: number, caseId: number, start: number]>(
       'SELECT solver, case_id, start FROM solves WHERE run_id = ?',
+    )
+    .raw();
+  const costs = sqlite
+    .prepare<[number], SolveCostRow>(
+      `SELECT solver, case_id, outcome, evaluations, ifnull(remarks, '') LIKE '%"rightly refused"%'
+       FROM solves WHERE run_id = ?`,
     )
     .raw();
   const pathOf = sqlite.prepare<[number], Buffer>('SELECT data FROM paths WHERE solve_id = ?').pluck();
@@ -104,6 +118,8 @@ export function createSolvesRepo(client: DatabaseClient) {
     readOne: (id: number): SolveRow | undefined => one.get(id),
     readRunOf: (id: number): number | undefined => runOf.get(id),
     readKeys: (runId: number) => keys.all(runId),
+    /** What a profile needs of every solve of a run, a fraction of the whole. */
+    readCosts: (runId: number): SolveCostRow[] => costs.all(runId),
     readPath: (id: number): Buffer | undefined => pathOf.get(id),
   };
 }
