@@ -23,7 +23,12 @@ export default defineConfig({
       },
       {
         extends: true,
-        test: { name: 'e2e', include: ['tests/e2e/**/*.test.ts'], testTimeout: 120_000, hookTimeout: 180_000 },
+        test: {
+          name: 'e2e',
+          include: ['tests/e2e/**/*.test.ts'],
+          testTimeout: 120_000,
+          hookTimeout: 180_000,
+        },
       },
     ],
   },

@@ -54,7 +54,7 @@ function readCounts(report: string): { passed: number; failed: number } {
   }
 }
 
-count(await run('biome', ['ci', '.']));
+count(await run('biome', ['ci', '--colors=off', '.']));
 count(await run('tsc', []));
 count(await run('vite', ['build', '--logLevel', 'warn']));
 for (const project of ['unit', 'http', 'peers', 'e2e']) await runTests(project);
