@@ -147,6 +147,8 @@ const samples: Record<string, { at: string; body?: object; status?: number }> = 
   'get /libraries/:library/allowances/revisions/:number': {
     at: '/libraries/pocket-roots/allowances/revisions/1',
   },
+  'get /kits': { at: '/kits' },
+  'get /kits/:kit.tar.gz': { at: '/kits/node.tar.gz' },
   'get /audit-log': { at: '/audit-log' },
   'get /about': { at: '/about' },
   'get /openapi.json': { at: '/openapi.json' },
