@@ -3,6 +3,11 @@ import { type ErrorCode, errorStatus } from '../../shared/errors.ts';
 import { problem } from '../../shared/schemas/problem.ts';
 import type { ApiAnswer, ApiEntry, NamedSchema } from './entry.ts';
 
+/** What each route needs, by its key, as its routes declare it. */
+export type Actions = ReadonlyMap<string, string>;
+
+export const keyOf = ({ method, path }: { method: string; path: string }): string => `${method} ${path}`;
+
 type Json = Record<string, unknown>;
 
 const refTo = (name: string): Json => ({ $ref: `#/components/schemas/${name}` });
@@ -39,7 +44,7 @@ function pathParameters(path: string): Json[] {
     name,
     in: 'path',
     required: true,
-    schema: { type: name === 'library' || name === 'suite' ? 'string' : 'integer' },
+    schema: { type: ['library', 'suite', 'kit'].includes(name) ? 'string' : 'integer' },
   }));
 }
 
@@ -79,7 +84,7 @@ export function operationId({ method, path }: Pick<ApiEntry, 'method' | 'path'>)
   return method + words.map((word) => word.charAt(0).toUpperCase() + word.slice(1)).join('');
 }
 
-function operation(entry: ApiEntry): Json {
+function operation(entry: ApiEntry, action: string | undefined): Json {
   const { summary, about, chapter, answers, problems } = entry;
   const successes = answers.map((answer) => [answer.status, responseOf(answer)]);
   return {
@@ -87,6 +92,7 @@ function operation(entry: ApiEntry): Json {
     summary,
     ...(about === undefined ? {} : { description: about }),
     tags: [chapter],
+    ...(action === undefined ? {} : { 'x-permission': action }),
     parameters: [...pathParameters(entry.path), ...queryParameters(entry.query)],
     requestBody: requestBody(entry),
     responses: { ...Object.fromEntries(successes), ...problemResponses(problems) },
@@ -94,11 +100,15 @@ function operation(entry: ApiEntry): Json {
 }
 
 /** The description of the API as OpenAPI 3.1, whose schemas are JSON Schema of draft 2020-12. */
-export function openApiDocument(entries: readonly ApiEntry[], version: string): Json {
+export function openApiDocument(
+  entries: readonly ApiEntry[],
+  version: string,
+  actions: Actions = new Map(),
+): Json {
   const paths: Record<string, Json> = {};
   for (const entry of entries) {
     const path = entry.path.replace(/:(\w+)/g, '{$1}');
-    paths[path] = { ...paths[path], [entry.method]: operation(entry) };
+    paths[path] = { ...paths[path], [entry.method]: operation(entry, actions.get(keyOf(entry))) };
   }
   return {
     openapi: '3.1.0',

@@ -23,7 +23,7 @@ nav ul { list-style: none; display: flex; flex-wrap: wrap; gap: 4px 22px; paddin
 section.chapter { border-top: 4px double var(--margin); margin-top: 34px; padding-top: 18px; }
 article { display: grid; grid-template-columns: 260px minmax(0, 1fr); gap: 4px 28px; padding: 14px 0;
   border-bottom: 1px solid var(--rule); scroll-margin-top: 8px; }
-article > :first-child { grid-row: span 9; }
+article > div > p:first-child { margin-top: 0; }
 article:target { background: var(--sunk); }
 .quiet { color: var(--ink-3); font-size: 12.5px; line-height: 17px; }
 .method { text-transform: uppercase; font-weight: 700; }

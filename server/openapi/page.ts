@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { type ErrorCode, errorStatus } from '../../shared/errors.ts';
-import { componentSchemas, operationId } from './document.ts';
+import { type Actions, componentSchemas, keyOf, operationId } from './document.ts';
 import type { ApiAnswer, ApiEntry, NamedSchema } from './entry.ts';
 import { Html, html } from './html.ts';
 import { pageStyle } from './page-style.ts';
@@ -13,7 +13,10 @@ const linkTo = ({ name }: NamedSchema): Html => html`<a href="#schema-${name}">$
 function fieldRows(value: unknown): Html[] {
   const { properties = {}, required = [] } = readSchema(value);
   return Object.entries(properties).map(([name, field]) => {
-    const may = required.includes(name) ? '' : html` <span class="quiet">may be left out</span>`;
+    const may =
+      required.includes(name) || readSchema(field).default !== undefined
+        ? ''
+        : html` <span class="quiet">may be left out</span>`;
     return html`<tr><td><code>${name}</code></td><td><span class="type">${typeWords(field)}</span>${may}</td></tr>`;
   });
 }
@@ -35,17 +38,18 @@ function problemLine(codes: readonly ErrorCode[]): Html {
   return html`<p class="quiet">Problems: ${words}</p>`;
 }
 
-function entryBlock(entry: ApiEntry): Html {
+function entryBlock(entry: ApiEntry, action: string | undefined): Html {
   const { method, path, summary, about, query, body, file } = entry;
   return html`<article id="${operationId(entry)}">
 <h3><span class="method">${method}</span> /api${path.replace(/:(\w+)/g, '{$1}')}</h3>
-<p>${summary}</p>
+<div><p>${summary}</p>
 ${about === undefined ? '' : html`<p class="quiet">${about}</p>`}
 ${fieldTable('query', query ? fieldRows(z.toJSONSchema(query, { io: 'input' })) : [])}
 ${body ? html`<p>Send ${linkTo(body)} as JSON${file ? html`, or a form with the file <code>${file.field}</code>: ${file.about}` : '.'}</p>` : ''}
 ${entry.answers.map(answerLine)}
 ${problemLine(entry.problems)}
-</article>`;
+${action === undefined ? '' : html`<p class="quiet">Needs: ${action}</p>`}
+</div></article>`;
 }
 
 function schemaBlock(name: string, value: unknown): Html {
@@ -54,7 +58,7 @@ function schemaBlock(name: string, value: unknown): Html {
   return html`<article id="schema-${name}"><h3>${name}</h3><div>${whole}</div></article>`;
 }
 
-export function apiPage(entries: readonly ApiEntry[], version: string): string {
+export function apiPage(entries: readonly ApiEntry[], version: string, actions: Actions = new Map()): string {
   const schemas = Object.entries(componentSchemas(entries));
   const chapters = [...new Set(entries.map((entry) => entry.chapter))];
   const idOf = (chapter: string): string => `chapter-${chapter.toLowerCase().replaceAll(' ', '-')}`;
@@ -66,7 +70,7 @@ export function apiPage(entries: readonly ApiEntry[], version: string): string {
 <nav aria-label="Chapters"><ul>${chapters.map((chapter) => html`<li><a href="#${idOf(chapter)}">${chapter}</a></li>`)}<li><a href="#schemas">Schemas</a></li></ul></nav>
 <main>${chapters.map(
     (chapter) => html`<section class="chapter" id="${idOf(chapter)}"><h2>${chapter}</h2>
-${entries.filter((entry) => entry.chapter === chapter).map((entry) => entryBlock(entry))}</section>`,
+${entries.filter((entry) => entry.chapter === chapter).map((entry) => entryBlock(entry, actions.get(keyOf(entry))))}</section>`,
   )}
 <section class="chapter" id="schemas"><h2>Schemas</h2>${schemas.map(([name, value]) => schemaBlock(name, value))}</section></main>
 </body></html>`;
