@@ -4,10 +4,17 @@ import { evaluationKinds } from './words.ts';
 /** Names of solvers and settings. */
 export const solverName = z
   .string()
-  .regex(/^[A-Za-z0-9][A-Za-z0-9._+-]{0,63}$/, 'a letter or digit, then letters, digits, . _ + - (64 at most)');
+  .regex(
+    /^[A-Za-z0-9][A-Za-z0-9._+-]{0,63}$/,
+    'a letter or digit, then letters, digits, . _ + - (64 at most)',
+  );
 
 /** What is asked of an answer; 0 means not asked. Absolute and relative in x, absolute in f. */
-export const tolerance = z.strictObject({ xabs: z.number().min(0), xrel: z.number().min(0), fabs: z.number().min(0) });
+export const tolerance = z.strictObject({
+  xabs: z.number().min(0),
+  xrel: z.number().min(0),
+  fabs: z.number().min(0),
+});
 export type Tolerance = z.infer<typeof tolerance>;
 
 /** One solver as its manifest declares it, defaults filled in. */

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
+import { localActor } from '../../../server/actor.ts';
 import { openDatabase } from '../../../server/db/client.ts';
 import { orderStatusCode, outcomeCode, wordOf } from '../../../server/db/codes.ts';
-import { localActor } from '../../../server/actor.ts';
 import { orderStatuses } from '../../../shared/schemas/solve.ts';
 import { outcomes } from '../../../shared/schemas/words.ts';
 import { freshDatabaseFile, openTestApp, seedLibrary } from '../../helpers/app.ts';
