@@ -2,7 +2,7 @@ import { createServer as createViteServer } from 'vite';
 import { projectFolder } from './build-client.ts';
 import { readConfig } from './config.ts';
 import { seedDemoOnce } from './seed-demo.ts';
-import { closeOnSignals, runMain, serve } from './serve.ts';
+import { closeOnSignals, runMain, saySetUp, serve } from './serve.ts';
 
 /** The server with the client from its sources, which change in the browser as they are edited. */
 await runMain(async () => {
@@ -21,4 +21,6 @@ await runMain(async () => {
   closeOnSignals(running);
   process.stdout.write(`Tallyroot (development) is at ${running.address}\n`);
   if (await seedDemoOnce(config, running.services)) process.stdout.write('The demo is in place.\n');
+  if (running.mailCatcher) process.stdout.write(`Its mails are shown at ${running.mailCatcher}\n`);
+  saySetUp(running);
 });

@@ -2,7 +2,7 @@ import { existsSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { readConfig } from './config.ts';
 import { staticSite } from './http/static-site.ts';
-import { closeOnSignals, runMain, serve } from './serve.ts';
+import { closeOnSignals, runMain, saySetUp, serve } from './serve.ts';
 
 /** The server alone, with the client as it was built last. */
 await runMain(async () => {
@@ -11,4 +11,5 @@ await runMain(async () => {
   const running = await serve({ config: readConfig(), site });
   closeOnSignals(running);
   process.stdout.write(`Tallyroot is at ${running.address}\n`);
+  saySetUp(running);
 });

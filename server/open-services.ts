@@ -13,6 +13,8 @@ export interface OpenServicesOptions {
   lanes: number;
   /** Whether requests may name folders and repositories of this machine. */
   allowsLocalPaths?: boolean;
+  /** Where people reach the server. */
+  address?: () => string;
   onJobError: ServicesOptions['onJobError'];
   /** Left out where a process only looks, and for tests that bring suites of their own. */
   hasBuiltInSuites?: boolean;
@@ -33,6 +35,7 @@ export function openServices(options: OpenServicesOptions): { client: DatabaseCl
     environment: describeEnvironment('unconfined'),
     lanes: options.lanes,
     allowsLocalPaths: options.allowsLocalPaths ?? false,
+    ...(options.address ? { address: options.address } : {}),
     onJobError: options.onJobError,
   });
   if (options.hasBuiltInSuites ?? true) loadBuiltInSuites(services.suites);

@@ -1,6 +1,7 @@
 import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
 import type { Config } from './config.ts';
+import { settleDemoPeople } from './demo/people.ts';
 import type { Services } from './features/services.ts';
 
 type Seed = (services: Services, folder: string) => Promise<void>;
@@ -26,6 +27,11 @@ export async function seedDemoOnce(config: Config, services: Services): Promise<
   const note = path.join(config.dataFolder, 'demo-state.txt');
   const state = existsSync(note) ? readFileSync(note, 'utf8').trim() : 'none';
   const isEmpty = services.libraries.list({ limit: 1 }).items.length === 0;
+  // A demo from before people signed in gets its people.
+  const isWhole =
+    state === 'done' &&
+    services.libraries.list({ limit: 500 }).items.some(({ slug }) => slug === 'larkroots');
+  if (isWhole && !services.people.hasRealPeople()) settleDemoPeople(services, 'larkroots');
   if (state === 'done' || (state === 'none' && !isEmpty)) return false;
   const seed = await loadSeed();
   if (!seed) return false;

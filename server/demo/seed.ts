@@ -5,13 +5,13 @@ import type { RunBase } from '../../shared/schemas/runs.ts';
 import type { Actor } from '../actor.ts';
 import type { Services } from '../features/services.ts';
 import { type DemoCommit, demoCommits, writeLarkroots } from './larkroots.ts';
+import { ensureDemoPeople, settleDemoPeople } from './people.ts';
 
 const slug = 'larkroots';
 /** Every build runs on the small suite; main's last one and the branches on this one too. */
 const smallSuite = 'hard-dozen';
 const largeSuite = 'open-starts';
 
-const maud: Actor = { name: 'Maud Ferreday' };
 const main = demoCommits.filter((commit) => commit.branch === 'main');
 
 /**
@@ -20,6 +20,8 @@ const main = demoCommits.filter((commit) => commit.branch === 'main');
  * interruption: what is there already is found again.
  */
 export async function seedDemo(services: Services, folder: string): Promise<void> {
+  const actorOf = ensureDemoPeople(services);
+  const maud = actorOf('Maud Ferreday');
   const repository = join(folder, slug);
   await writeOnce(repository);
   if (services.libraries.list({ limit: 100 }).items.every((library) => library.slug !== slug)) {
@@ -28,21 +30,29 @@ export async function seedDemo(services: Services, folder: string): Promise<void
       name: 'larkroots',
       description: 'Roots of one equation in one unknown, for the field notebooks of Larkmoor.',
       homepage: null,
+      visibility: 'public',
     });
   }
+  settleDemoPeople(services, slug);
   let before: number | null = null;
   for (const { commit, hash } of await commitsOf(repository)) {
-    const build = await registerOnce(services, repository, join(folder, 'builds'), commit, hash);
+    const build = await registerOnce({ services, repository, actorOf }, join(folder, 'builds'), commit, hash);
     const isTip = commit === main.at(-1) || commit.branch !== 'main';
     const against: RunBase | null = before === null ? null : { kind: 'run', run: before };
     // Branches are measured against what the team has agreed on, main against the build before.
     const base = commit.branch === 'main' ? against : undefined;
-    const run = await runOnce(services, commit, { build, suite: smallSuite, against: base });
-    const large = isTip ? await runOnce(services, commit, { build, suite: largeSuite }) : null;
+    const run = await runOnce(services, actorOf(commit.author.name), {
+      build,
+      suite: smallSuite,
+      against: base,
+    });
+    const large = isTip
+      ? await runOnce(services, actorOf(commit.author.name), { build, suite: largeSuite })
+      : null;
     if (commit.branch === 'main') before = run;
     if (commit === main.at(-1)) {
-      agreeOnce(services, smallSuite, run);
-      if (large !== null) agreeOnce(services, largeSuite, large);
+      agreeOnce(services, maud, smallSuite, run);
+      if (large !== null) agreeOnce(services, maud, largeSuite, large);
     }
   }
 }
@@ -65,16 +75,21 @@ async function commitsOf(repository: string): Promise<{ commit: DemoCommit; hash
   );
 }
 
+interface DemoWork {
+  services: Services;
+  repository: string;
+  actorOf(name: string): Actor;
+}
+
 async function registerOnce(
-  services: Services,
-  repository: string,
+  { services, repository, actorOf }: DemoWork,
   builds: string,
   commit: DemoCommit,
   hash: string,
 ): Promise<number> {
   const checkout = join(builds, hash.slice(0, 12));
   if (!existsSync(checkout)) await simpleGit(repository).raw('worktree', 'add', '--detach', checkout, hash);
-  const actor: Actor = { name: commit.author.name };
+  const actor = actorOf(commit.author.name);
   const { build } = await services.builds.registerFolder(actor, slug, {
     folder: checkout,
     label: commit.message,
@@ -85,17 +100,17 @@ async function registerOnce(
 /** Runs a build on a suite, or finds the run that did, and waits for its end. */
 async function runOnce(
   services: Services,
-  commit: DemoCommit,
+  actor: Actor,
   body: { build: number; suite: string; against?: RunBase | null | undefined },
 ): Promise<number> {
   const known = services.runs.list({ build: body.build, suite: body.suite, limit: 1 }).items[0];
-  const run = known ?? services.runs.start({ name: commit.author.name }, body);
+  const run = known ?? services.runs.start(actor, body);
   const ended = await services.runs.wait(run.id);
   if (ended.status !== 'finished') throw new Error(`Demo run ${run.id} ended: ${ended.status}.`);
   return run.id;
 }
 
-function agreeOnce(services: Services, suite: string, run: number): void {
+function agreeOnce(services: Services, actor: Actor, suite: string, run: number): void {
   if (services.references.list(slug, { suite, limit: 1 }).items.length > 0) return;
-  services.references.setFirst(maud, slug, { run, reason: 'What main does is what we agree on from here.' });
+  services.references.setFirst(actor, slug, { run, reason: 'What main does is what we agree on from here.' });
 }

@@ -1,4 +1,5 @@
 import path from 'node:path';
+import { fileURLToPath } from 'node:url';
 import { matchNames } from '../../shared/comparison/pair.ts';
 import type { Environment } from '../../shared/schemas/measurement.ts';
 import { solveKey } from '../../shared/schemas/solve.ts';
@@ -8,6 +9,8 @@ import { type Clock, systemClock } from '../jobs/clock.ts';
 import { createEventBus } from '../jobs/event-bus.ts';
 import { createJobRunner, type JobRunnerOptions } from '../jobs/job-runner.ts';
 import { createQueue } from '../jobs/queue.ts';
+import { createMailService } from '../mail/mail.service.ts';
+import { createOutboxRepo } from '../mail/outbox.repo.ts';
 import { createAllowancesService } from './allowances/allowances.service.ts';
 import { createAuditService } from './audit/audit.service.ts';
 import type { ReadManifest } from './builds/build-folder.ts';
@@ -22,8 +25,13 @@ import { loadReferenceSide, loadRunSide } from './comparisons/comparable.ts';
 import { createComparisonsService } from './comparisons/comparisons.service.ts';
 import { createExportsService } from './comparisons/exports.service.ts';
 import { createProfilesService } from './comparisons/profiles.service.ts';
+import { createInvitationsService } from './invitations/invitations.service.ts';
+import { createKitsService } from './kits/kits.service.ts';
 import { createLibrariesService } from './libraries/libraries.service.ts';
 import { createTrendsService } from './libraries/trends.service.ts';
+import { createMembersRepo } from './members/members.repo.ts';
+import { createMembersService } from './members/members.service.ts';
+import { createPeopleService } from './people/people.service.ts';
 import { createReferencesRepo } from './references/references.repo.ts';
 import { createReferencesService, platformOf } from './references/references.service.ts';
 import type { BaseSolves } from './runs/confirm-run.ts';
@@ -38,6 +46,7 @@ import { createSolvesService } from './runs/solves.service.ts';
 import { createStripsService } from './runs/strips.service.ts';
 import { createSolversService } from './solvers/solvers.service.ts';
 import { createSuitesService } from './suites/suites.service.ts';
+import { createTokensService } from './tokens/tokens.service.ts';
 
 export interface ServicesOptions {
   client: DatabaseClient;
@@ -52,6 +61,8 @@ export interface ServicesOptions {
   allowsLocalPaths?: boolean;
   /** For preparing one build. */
   prepareMs?: number;
+  /** Where people reach the server, for links in mails. */
+  address?: () => string;
   onJobError: JobRunnerOptions['onError'];
   clock?: Clock;
   pollMs?: number;
@@ -70,7 +81,23 @@ export function createServices(options: ServicesOptions) {
   const base = { client, clock, bus };
 
   const audit = createAuditService(db, clock);
-  const libraries = createLibrariesService({ ...base, audit });
+  const members = createMembersRepo(db);
+  const libraries = createLibrariesService({ ...base, audit, members });
+  const address = () => options.address?.() ?? 'http://localhost';
+  const outbox = createOutboxRepo(db);
+  const mail = createMailService({ ...base, audit, outbox });
+  const people = createPeopleService({ ...base, audit });
+  const tokens = createTokensService({ ...base, audit, libraries });
+  const memberships = createMembersService({ ...base, audit, libraries, people, members });
+  const invitations = createInvitationsService({
+    ...base,
+    audit,
+    libraries,
+    people,
+    members: memberships,
+    mail,
+    address,
+  });
   const solvers = createSolversService(db, libraries);
   const store = createBuildStore(options.dataFolder ?? path.dirname(client.sqlite.name));
   const { readManifest } = options;
@@ -195,8 +222,18 @@ export function createServices(options: ServicesOptions) {
     pollMs: options.pollMs ?? 1000,
   });
 
+  const kits = createKitsService(fileURLToPath(new URL('../kits/', import.meta.url)));
+
   return {
     audit,
+    address,
+    people,
+    members: memberships,
+    invitations,
+    tokens,
+    mail,
+    outbox,
+    kits,
     libraries,
     solvers,
     builds,

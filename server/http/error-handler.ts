@@ -53,6 +53,7 @@ export function errorHandler(logger: Logger): ErrorRequestHandler {
       requestId,
     };
     if (known.issues.length > 0) body.issues = known.issues;
+    if (known.code === 'unauthenticated') response.set('WWW-Authenticate', 'Bearer');
     response.status(status).set('Cache-Control', 'no-store').type('application/problem+json');
     response.send(JSON.stringify(body));
   };

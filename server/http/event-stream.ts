@@ -7,6 +7,8 @@ export interface EventStreamOptions {
   filter?: (event: ServerEvent) => boolean;
   /** Sent first, so that a client that comes back has the state of now. */
   first?: ServerEvent | undefined;
+  /** Asked before anything is sent; the stream ends where it says no. */
+  mayGoOn?: () => boolean;
   keepAliveMs?: number;
   /** At most one event of a run in this time; the last one is always sent. */
   throttleMs?: number;
@@ -14,7 +16,7 @@ export interface EventStreamOptions {
 
 /** Sends events to one client (server-sent events, as the HTML standard has them) until it leaves. */
 export function sendEvents(response: Response, options: EventStreamOptions): void {
-  const { bus, filter = () => true, keepAliveMs = 20_000, throttleMs = 200 } = options;
+  const { bus, filter = () => true, mayGoOn = () => true, keepAliveMs = 20_000, throttleMs = 200 } = options;
   response.status(200).set({
     'Content-Type': 'text/event-stream',
     'Cache-Control': 'no-store',
@@ -25,7 +27,14 @@ export function sendEvents(response: Response, options: EventStreamOptions): voi
 
   const held = new Map<number, ServerEvent>();
   const timers = new Map<number, NodeJS.Timeout>();
-  const send = (event: ServerEvent) => response.write(`data: ${JSON.stringify(event)}\n\n`);
+  const write = (text: string) => {
+    if (mayGoOn()) response.write(text);
+    else response.end();
+  };
+  const send = (event: ServerEvent) => {
+    // Asked once more for one that was held back: what was visible then may not be now.
+    if (!response.writableEnded && filter(event)) write(`data: ${JSON.stringify(event)}\n\n`);
+  };
 
   function offer(event: ServerEvent): void {
     if (event.kind !== 'run') {
@@ -49,12 +58,12 @@ export function sendEvents(response: Response, options: EventStreamOptions): voi
     );
   }
 
-  if (options.first) send(options.first);
+  if (options.first) write(`data: ${JSON.stringify(options.first)}\n\n`);
   const unsubscribe = bus.subscribe((event) => {
-    if (filter(event)) offer(event);
+    if (!response.writableEnded && filter(event)) offer(event);
   });
   const forget = bus.onClose(() => response.end());
-  const keepAlive = setInterval(() => response.write(': still here\n\n'), keepAliveMs);
+  const keepAlive = setInterval(() => write(': still here\n\n'), keepAliveMs);
   response.on('close', () => {
     unsubscribe();
     forget();

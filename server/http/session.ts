@@ -1,18 +1,26 @@
-import type { RequestHandler, Response } from 'express';
-import { type Actor, localActor } from '../actor.ts';
+import type { Request, RequestHandler, Response } from 'express';
+import type { Actor } from '../actor.ts';
+import type { Access } from '../auth/access.ts';
+import type { PersonCaller } from '../auth/caller.ts';
 
-/**
- * Says who makes a request. The server listens to this machine alone, so whoever reaches it is the person
- * at it; routes ask `actorOf` and nothing else, so that they need not change when people sign in.
- */
-export const session: RequestHandler = (_request, response, next) => {
-  response.locals.actor = localActor;
-  next();
-};
+const accesses = new WeakMap<Response, Access>();
 
-export function actorOf(response: Response): Actor {
-  const actor: unknown = response.locals.actor;
-  if (typeof actor === 'object' && actor !== null && 'name' in actor && typeof actor.name === 'string')
-    return { name: actor.name };
-  throw new TypeError('A route asked who acts before the session was set up');
+/** Finds out who makes a request, before any route. */
+export function session(identify: (request: Request, response: Response) => Promise<Access>): RequestHandler {
+  return async (request, response, next) => {
+    accesses.set(response, await identify(request, response));
+    next();
+  };
 }
+
+/** What the one who makes the request may do. */
+export function accessOf(response: Response): Access {
+  const access = accesses.get(response);
+  if (!access) throw new TypeError('A route asked who acts before the session was set up');
+  return access;
+}
+
+export const actorOf = (response: Response): Actor => accessOf(response).actor;
+
+/** The person who makes the request; throws for a bot and for one who is not signed in. */
+export const personOf = (response: Response): PersonCaller => accessOf(response).person();

@@ -53,3 +53,4 @@ export const unchanged: ApiAnswer = {
 export const events = (body: NamedSchema, meaning: string): ApiAnswer => {
   return { status: 200, meaning, body, mediaTypes: ['text/event-stream'] };
 };
+export const empty = (meaning = 'It was done.'): ApiAnswer => ({ status: 204, meaning });

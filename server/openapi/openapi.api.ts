@@ -1,18 +1,9 @@
 import { z } from 'zod';
-import { environment } from '../../shared/schemas/measurement.ts';
 import { type ApiEntry, named, ok } from './entry.ts';
 
 const chapter = 'Site';
 
 export const openapiApi: readonly ApiEntry[] = [
-  {
-    method: 'get',
-    path: '/about',
-    chapter,
-    summary: 'Says which Tallyroot this is and where it measures.',
-    answers: [ok(named('About', z.strictObject({ name: z.string(), environment })))],
-    problems: [],
-  },
   {
     method: 'get',
     path: '/openapi.json',

@@ -3,6 +3,8 @@ import type { AddressInfo } from 'node:net';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 import { pino } from 'pino';
 import { createApp } from '../../server/app.ts';
+import { testIdentity } from '../helpers/app-identity.ts';
+import { signInDefault } from '../helpers/sign-in.ts';
 import { type BenchStore, openBenchStore, shortest, solveCount, timed } from './stored-solves.ts';
 
 /** Kept between two calls, since it takes a while to fill. */
@@ -56,7 +58,17 @@ export async function benchRequests(): Promise<RequestsBench> {
   const store = await openBenchStore(folder);
   const runs = await fill(store);
   const { client, services } = store;
-  const server = createServer(createApp({ services, logger: pino({ level: 'silent' }), allowedHosts: [] }));
+  const server = createServer(
+    signInDefault(
+      createApp({
+        services,
+        identity: testIdentity(client, services),
+        logger: pino({ level: 'silent' }),
+        allowedHosts: [],
+      }),
+      services,
+    ).app,
+  );
   await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
   const { port } = server.address() as AddressInfo;
   const get = async (address: string): Promise<number> => {

@@ -2,17 +2,20 @@ import { copyFileSync, mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'nod
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import type { Express } from 'express';
-import { pino } from 'pino';
+import { type Logger, pino } from 'pino';
 import { afterAll } from 'vitest';
 import { localActor } from '../../server/actor.ts';
 import { createApp } from '../../server/app.ts';
+import type { Identity } from '../../server/auth/identity.ts';
 import { type DatabaseClient, openDatabase } from '../../server/db/client.ts';
 import { migrateDatabase } from '../../server/db/migrate.ts';
 import { createServices, type Services, type ServicesOptions } from '../../server/features/services.ts';
 import { recipe } from '../../shared/schemas/builds.ts';
 import type { SolverDeclaration } from '../../shared/schemas/solver.ts';
 import { createFakeMeasuring, type FakeMeasuring } from './app-fake-measuring.ts';
+import { type IdentityChoices, testIdentity } from './app-identity.ts';
 import { buildRevision, buildSolver, testEnvironment } from './builders.ts';
+import { signInDefault } from './sign-in.ts';
 
 export const scratchFolder = mkdtempSync(path.join(tmpdir(), 'tallyroot-app-'));
 let count = 0;
@@ -60,7 +63,12 @@ export function makeBuildFolder(given: {
 export interface TestApp {
   client: DatabaseClient;
   services: Services;
+  identity: Identity;
+  /** The application for one who is signed in: a maintainer of what `seedLibrary` makes, and admin of the site. */
   app: Express;
+  /** The application as it is: nobody is signed in. */
+  bare: Express;
+  person: { id: string; name: string };
   measuring: FakeMeasuring;
   jobErrors: unknown[];
   file: string;
@@ -73,7 +81,8 @@ const open = new Set<TestApp>();
 export function openTestApp(
   given: { measuring?: FakeMeasuring; file?: string } & Partial<
     Pick<ServicesOptions, 'clock' | 'readManifest' | 'allowsLocalPaths' | 'prepareMs'>
-  > = {},
+  > &
+    IdentityChoices & { logger?: Logger } = {},
 ): TestApp {
   const file = given.file ?? freshDatabaseFile();
   const client = openDatabase(file);
@@ -92,12 +101,17 @@ export function openTestApp(
     pollMs: 20,
     ...(given.clock ? { clock: given.clock } : {}),
   });
-  const logger = pino({ level: 'silent' });
-  const app = createApp({ services, logger, allowedHosts: [] });
+  const logger = given.logger ?? pino({ level: 'silent' });
+  const identity = testIdentity(client, services, given);
+  const bare = createApp({ services, identity, logger, allowedHosts: [] });
+  const signedIn = signInDefault(bare, services, given.hasDemo ?? true);
   const opened: TestApp = {
     client,
     services,
-    app,
+    identity,
+    app: signedIn.app,
+    bare,
+    person: signedIn.person,
     measuring,
     jobErrors,
     file,
@@ -114,11 +128,12 @@ export function openTestApp(
 /** A library with one build and the small suite of the builders. */
 export async function seedLibrary(app: TestApp, folder = makeBuildFolder({})) {
   const { services } = app;
-  const library = services.libraries.create(localActor, {
+  const library = services.libraries.create(app.person, {
     slug: 'pocket-roots',
     name: 'Pocket roots',
     description: '',
     homepage: null,
+    visibility: 'public',
   });
   const suite = services.suites.addRevision(localActor, {
     revision: buildRevision(),

@@ -302,7 +302,7 @@ describe('/api/libraries/:library/references', () => {
       for (const entry of page.items) {
         expect(entry).toMatchObject({
           reason: 'Agreed on Monday.',
-          decidedBy: 'local',
+          decidedBy: 'Wren Tolliver',
           since: 1,
           run: run.id,
         });

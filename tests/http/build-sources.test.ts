@@ -33,7 +33,7 @@ solvers:
 function openLibrary(given: Parameters<typeof openTestApp>[0] = {}): TestApp {
   const app = openTestApp({ readManifest, ...given });
   const fields = { slug: 'pocket-roots', name: 'Pocket roots', description: '', homepage: null };
-  app.services.libraries.create({ name: 'local' }, fields);
+  app.services.libraries.create(app.person, fields);
   return app;
 }
 

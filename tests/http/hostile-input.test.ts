@@ -30,7 +30,12 @@ async function sendHead(port: number, lines: string[]): Promise<string> {
 
 describe('requests that mean harm', () => {
   it('of 10 MB, or an archive of 200 MB, are refused by their head, before the body has come', async () => {
-    const server = createServer(openTestApp().app);
+    const app = openTestApp();
+    await request(app.app)
+      .post('/api/libraries')
+      .send({ ...library, slug: 'x' })
+      .expect(201);
+    const server = createServer(app.app);
     await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
     const { port } = server.address() as AddressInfo;
     const head = [

@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm';
 import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
 import { z } from 'zod';
+import { visibilities } from '../../../shared/permissions.ts';
 import { buildSources, buildStates, logKinds, recipe } from '../../../shared/schemas/builds.ts';
 import { issue } from '../../../shared/schemas/problem.ts';
 import { solverDeclaration } from '../../../shared/schemas/solver.ts';
@@ -14,6 +15,8 @@ export const libraries = sqliteTable(
     name: text('name').notNull(),
     description: text('description').notNull(),
     homepage: text('homepage'),
+    /** Libraries that were there before people signed in stay readable by all who do. */
+    visibility: text('visibility', { enum: visibilities }).notNull().default('public'),
     createdAt: time('created_at').notNull(),
     createdBy: text('created_by').notNull(),
   },

@@ -32,6 +32,8 @@ export const auditLog = sqliteTable(
     id: integer('id').primaryKey({ autoIncrement: true }),
     at: time('at').notNull(),
     actor: text('actor').notNull(),
+    /** The person's; null for tokens and for programs on the server itself. */
+    actorId: text('actor_id'),
     action: text('action', { enum: auditActions }).notNull(),
     libraryId: integer('library_id').references(() => libraries.id),
     subject: text('subject').notNull(),

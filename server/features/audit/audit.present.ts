@@ -6,6 +6,6 @@ export function presentAuditEntry(row: {
   entry: typeof auditLog.$inferSelect;
   library: string | null;
 }): AuditEntryView {
-  const { id, at, actor, action, subject, detail } = row.entry;
-  return { id, at: toIso(at), actor, action, library: row.library, subject, detail };
+  const { id, at, actor, actorId, action, subject, detail } = row.entry;
+  return { id, at: toIso(at), actor, actorId, action, library: row.library, subject, detail };
 }

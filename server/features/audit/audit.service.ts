@@ -21,7 +21,8 @@ export function createAuditService(db: Db, clock: Clock) {
       subject: string,
       detail: AuditDetail = {},
     ) {
-      repo.insert({ at: clock(), actor: actor.name, action, libraryId, subject, detail });
+      const { name, id = null } = actor;
+      repo.insert({ at: clock(), actor: name, actorId: id, action, libraryId, subject, detail });
     },
     list(query: AuditQuery): Page<AuditEntryView> {
       const library = query.library === undefined ? undefined : libraries.find(query.library);

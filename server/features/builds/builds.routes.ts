@@ -3,6 +3,7 @@ import { z } from 'zod';
 import { registerBuildBody, registerPreviewBody } from '../../../shared/schemas/builds.ts';
 import { pageQuery, rowId, slug } from '../../../shared/schemas/paging.ts';
 import { parseBody, parseRequest } from '../../http/parse-request.ts';
+import { needs, ofBuild, ofLibrary } from '../../http/permissions.ts';
 import { actorOf } from '../../http/session.ts';
 import type { BuildsService } from './builds.service.ts';
 
@@ -11,11 +12,11 @@ const byId = z.object({ build: rowId });
 
 export function buildsRoutes(builds: BuildsService): Router {
   const router = Router();
-  router.get('/libraries/:library/builds', (request, response) => {
+  router.get('/libraries/:library/builds', needs('library.read', ofLibrary), (request, response) => {
     const { library } = parseRequest(inLibrary, request.params, 'address');
     response.json(builds.list(library, parseRequest(pageQuery, request.query, 'query')));
   });
-  router.post('/libraries/:library/builds', async (request, response) => {
+  router.post('/libraries/:library/builds', needs('build.register', ofLibrary), async (request, response) => {
     const { library } = parseRequest(inLibrary, request.params, 'address');
     const actor = actorOf(response);
     const { build, isNew } = isOfPreview(request.body)
@@ -26,7 +27,7 @@ export function buildsRoutes(builds: BuildsService): Router {
       .location(`/api/builds/${build.id}`)
       .json(build);
   });
-  router.get('/builds/:build', (request, response) => {
+  router.get('/builds/:build', needs('build.follow', ofBuild), (request, response) => {
     response.json(builds.get(parseRequest(byId, request.params, 'address').build));
   });
   return router;

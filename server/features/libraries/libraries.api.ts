@@ -1,4 +1,5 @@
 import {
+  changeLibraryBody,
   createLibraryBody,
   libraryPage,
   libraryView,
@@ -37,6 +38,15 @@ export const librariesApi: readonly ApiEntry[] = [
     summary: 'Reads a library.',
     answers: [ok(library)],
     problems: ['invalid', 'not_found'],
+  },
+  {
+    method: 'patch',
+    path: '/libraries/:library',
+    chapter,
+    summary: 'Changes what a library is called and who may see it.',
+    body: named('ChangeLibrary', changeLibraryBody),
+    answers: [ok(library)],
+    problems: ['invalid', 'unauthenticated', 'forbidden', 'not_found'],
   },
   {
     method: 'get',

@@ -10,6 +10,7 @@ export interface CountedLibrary {
 }
 
 export function presentLibrary({ library, ...counts }: CountedLibrary): LibraryView {
-  const { slug, name, description, homepage, createdAt, createdBy } = library;
-  return { slug, name, description, homepage, createdAt: toIso(createdAt), createdBy, ...counts };
+  const { slug, name, description, homepage, visibility, createdBy } = library;
+  const createdAt = toIso(library.createdAt);
+  return { slug, name, description, homepage, visibility, createdAt, createdBy, ...counts };
 }

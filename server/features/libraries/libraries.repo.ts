@@ -1,7 +1,8 @@
-import { asc, eq, gt, sql } from 'drizzle-orm';
+import { and, asc, eq, gt, sql } from 'drizzle-orm';
 import { AppError } from '../../../shared/errors.ts';
 import { type Db, isConstraintError } from '../../db/client.ts';
 import { libraries } from '../../db/schema/libraries.ts';
+import { isOfVisible, type VisibleLibraries } from '../../db/visible-libraries.ts';
 
 export type LibraryRow = typeof libraries.$inferSelect;
 
@@ -25,6 +26,8 @@ export function createLibrariesRepo(db: Db) {
         });
       }
     },
+    update: (id: number, change: Partial<typeof libraries.$inferInsert>): LibraryRow | undefined =>
+      db.update(libraries).set(change).where(eq(libraries.id, id)).returning().get(),
     find: (slug: string): LibraryRow | undefined =>
       db.select().from(libraries).where(eq(libraries.slug, slug)).get(),
     findById: (id: number): LibraryRow | undefined =>
@@ -36,11 +39,20 @@ export function createLibrariesRepo(db: Db) {
         .where(eq(libraries.slug, slug))
         .get(),
     /** By slug, from A to Z. */
-    listQuery(options: { after?: string | undefined; limit: number }) {
+    listQuery(options: {
+      after?: string | undefined;
+      visible?: VisibleLibraries | undefined;
+      limit: number;
+    }) {
       return db
         .select({ library: libraries, ...counts })
         .from(libraries)
-        .where(options.after === undefined ? undefined : gt(libraries.slug, options.after))
+        .where(
+          and(
+            options.visible && isOfVisible(libraries.id, options.visible),
+            options.after === undefined ? undefined : gt(libraries.slug, options.after),
+          ),
+        )
         .orderBy(asc(libraries.slug))
         .limit(options.limit);
     },

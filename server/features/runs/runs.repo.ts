@@ -4,6 +4,7 @@ import type { DatabaseClient } from '../../db/client.ts';
 import { builds, libraries } from '../../db/schema/libraries.ts';
 import { runSolvers, runs } from '../../db/schema/runs.ts';
 import { suiteRevisions, suites } from '../../db/schema/suites.ts';
+import { isOfVisible, type VisibleLibraries } from '../../db/visible-libraries.ts';
 
 export type RunRow = typeof runs.$inferSelect;
 export type RunSolverRow = typeof runSolvers.$inferSelect;
@@ -13,6 +14,7 @@ export interface RunFilter {
   buildId?: number | undefined;
   suiteId?: number | undefined;
   status?: RunStatus | undefined;
+  visible?: VisibleLibraries | undefined;
   before?: number | undefined;
   limit: number;
 }
@@ -94,6 +96,7 @@ export function createRunsRepo(client: DatabaseClient) {
         filter.buildId === undefined ? undefined : eq(runs.buildId, filter.buildId),
         filter.suiteId === undefined ? undefined : eq(runs.suiteId, filter.suiteId),
         filter.status === undefined ? undefined : eq(runs.status, filter.status),
+        filter.visible && isOfVisible(runs.libraryId, filter.visible),
         filter.before === undefined ? undefined : lt(runs.id, filter.before),
       ];
       return selectNamed()

@@ -13,6 +13,7 @@ import type { SolverDeclaration } from '../../../shared/schemas/solver.ts';
 import type { Actor } from '../../actor.ts';
 import { type DatabaseClient, inTransaction } from '../../db/client.ts';
 import { numberCursor, toPage } from '../../db/cursor.ts';
+import type { VisibleLibraries } from '../../db/visible-libraries.ts';
 import type { Clock } from '../../jobs/clock.ts';
 import type { EventBus } from '../../jobs/event-bus.ts';
 import type { Queue } from '../../jobs/queue.ts';
@@ -166,12 +167,14 @@ export function createRunsService(deps: RunsServiceDeps) {
     get: (id: number): RunView => presentRun(requireNamed(id)),
     getDetail: (id: number): RunDetail =>
       presentRunDetail(requireNamed(id), runs.readSolvers(id), runs.countOutcomes(id)),
-    list(query: RunsQuery): Page<RunView> {
+    /** Of the libraries that are visible; of all where it does not matter who asks. */
+    list(query: RunsQuery, visible?: VisibleLibraries): Page<RunView> {
       const rows = runs
         .listQuery({
           libraryId: query.library === undefined ? undefined : deps.libraries.require(query.library).id,
           suiteId: query.suite === undefined ? undefined : deps.suites.requireSuite(query.suite).id,
           buildId: query.build,
+          visible,
           status: query.status,
           before: numberCursor(query.cursor, 1)?.[0],
           limit: query.limit + 1,
