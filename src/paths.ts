@@ -6,6 +6,8 @@ export const paths = {
   search: (text: string) => `/search?q=${part(text)}`,
   libraries: () => '/libraries',
   library: (slug: string) => `/libraries/${part(slug)}`,
+  registerBuild: (slug: string, source?: string) =>
+    `/libraries/${part(slug)}/register${source === undefined ? '' : `?source=${part(source)}`}`,
   build: (id: number) => `/builds/${id}`,
   run: (id: number) => `/runs/${id}`,
   solve: (id: number, view: { against?: number | undefined; back?: string | undefined } = {}) => {
@@ -24,4 +26,7 @@ export const paths = {
     revision === undefined ? `/suites/${part(slug)}` : `/suites/${part(slug)}?revision=${revision}`,
   suiteCase: (slug: string, caseId: string, revision?: number) =>
     `/suites/${part(slug)}/cases/${part(caseId)}${revision === undefined ? '' : `?revision=${revision}`}`,
+  guide: () => '/guide',
+  guideChapter: (chapter: string, section?: string) =>
+    `/guide/${part(chapter)}${section === undefined ? '' : `#${part(section)}`}`,
 } as const;

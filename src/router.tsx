@@ -45,6 +45,14 @@ const pages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('./routes/suite/case-page.tsx')).CasePage }),
   },
   {
+    path: 'guide',
+    lazy: async () => ({ Component: (await import('./routes/guide/guide-page.tsx')).GuidePage }),
+  },
+  {
+    path: 'guide/:chapter',
+    lazy: async () => ({ Component: (await import('./routes/guide/chapter-page.tsx')).ChapterPage }),
+  },
+  {
     path: 'search',
     lazy: async () => ({ Component: (await import('./routes/search-page.tsx')).SearchPage }),
   },

@@ -13,6 +13,7 @@ export interface NavWord {
 export const navWords: readonly NavWord[] = [
   { to: paths.libraries(), label: 'Libraries' },
   { to: paths.suites(), label: 'Suites' },
+  { to: paths.guide(), label: 'Guide' },
 ];
 
 /** Head of every sheet: sign, words, search, colours. */
