@@ -82,6 +82,19 @@ export async function openPage(
   return { page, context, errors };
 }
 
+/** Signs in one of the demo's people, as the sign-in page does. */
+export async function signIn(context: BrowserContext, site: DemoSite, name: string): Promise<void> {
+  const headers = { origin: site.address };
+  const people = await (await context.request.get(`${site.address}/api/demo/people`, { headers })).json();
+  const person = people.items.find((one: { name: string }) => one.name === name);
+  if (person === undefined) throw new Error(`The demo has nobody called ${name}.`);
+  const answer = await context.request.post(`${site.address}/api/demo/sign-in`, {
+    headers,
+    data: { person: person.id },
+  });
+  if (!answer.ok()) throw new Error(`Signing in answered ${answer.status()}: ${await answer.text()}`);
+}
+
 /** Rules of WCAG 2 A and AA, 2.1 AA and 2.2 AA that the page breaks, each with the first place. */
 export async function axeFindings(page: Page): Promise<string[]> {
   await page.evaluate(axeSource);

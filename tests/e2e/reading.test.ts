@@ -6,6 +6,7 @@ import {
   launchBrowser,
   openPage,
   sidewaysScroll,
+  signIn,
   startDemoSite,
 } from './browser.ts';
 
@@ -32,6 +33,7 @@ async function heading(page: Page, part: string): Promise<void> {
 describe('a contributor in the browser', () => {
   it('goes from the library to what the build did, and to the path that shows why', async () => {
     const { page, context, errors } = await openPage(browser, { width: 1440, scheme: 'light' });
+    await signIn(context, site, 'Tobin Askeland');
     await page.goto(`${site.address}/libraries`);
     await page.getByRole('link', { name: 'larkroots' }).first().click();
     const row = page.getByRole('row').filter({ hasText: 'One chord step for all solvers' });
@@ -71,6 +73,7 @@ describe('a contributor in the browser', () => {
       { width: 390, scheme: 'dark' },
     ] as const) {
       const { page, context } = await openPage(browser, view);
+      await signIn(context, site, 'Tobin Askeland');
       for (const path of [...new Set(visited), '/suites', '/suites/hard-dozen']) {
         await page.goto(site.address + path);
         await page.getByRole('heading', { level: 1 }).waitFor();
@@ -83,6 +86,7 @@ describe('a contributor in the browser', () => {
 
   it('scrolls nothing sideways at 360 px', async () => {
     const { page, context } = await openPage(browser, { width: 360, scheme: 'light' });
+    await signIn(context, site, 'Tobin Askeland');
     for (const path of [...new Set(visited), '/suites', '/suites/hard-dozen']) {
       await page.goto(site.address + path);
       await page.getByRole('heading', { level: 1 }).waitFor();
@@ -94,6 +98,7 @@ describe('a contributor in the browser', () => {
 
   it('walks a comparison by keyboard alone: j to the next pair, enter opens it, escape goes back', async () => {
     const { page, context } = await openPage(browser, { width: 1440, scheme: 'light' });
+    await signIn(context, site, 'Tobin Askeland');
     const comparison = visited.find((path) => path.includes('comparison')) ?? '';
     await page.goto(site.address + comparison);
     await page
