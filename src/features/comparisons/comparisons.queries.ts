@@ -1,5 +1,7 @@
 import { queryOptions } from '@tanstack/react-query';
-import { comparisonView, pairPage } from '../../../shared/schemas/comparisons.ts';
+import { codeDiffView } from '../../../shared/schemas/code-diff.ts';
+import { comparisonView, type ExportFormat, pairPage } from '../../../shared/schemas/comparisons.ts';
+import { profileView } from '../../../shared/schemas/profiles.ts';
 import type { RunBase } from '../../../shared/schemas/runs.ts';
 import { apiGet, apiGetAll, toQuery } from '../../lib/api.ts';
 
@@ -34,3 +36,25 @@ export const pairsQuery = (candidate: number, base: RunBase) =>
     queryFn: ({ signal }) =>
       apiGetAll(pairPage, '/comparisons/pairs', { ...sides(candidate, base), sort: 'suite' }, signal),
   });
+
+/** What changed in the source between the builds of the two sides. */
+export const codeDiffQuery = (candidate: number, base: RunBase) =>
+  queryOptions({
+    queryKey: [...comparisonKeys.all, candidate, writeBase(base), 'code'],
+    queryFn: ({ signal }) =>
+      apiGet(codeDiffView, `/comparisons/code-diff${toQuery(sides(candidate, base))}`, signal),
+    staleTime: 300_000,
+  });
+
+/** Performance profiles of the two sides; an empty solver means all together. */
+export const profileQuery = (candidate: number, base: RunBase, solver: string) =>
+  queryOptions({
+    queryKey: [...comparisonKeys.all, candidate, writeBase(base), 'profile', solver],
+    queryFn: ({ signal }) =>
+      apiGet(profileView, `/comparisons/profile${toQuery({ ...sides(candidate, base), solver })}`, signal),
+  });
+
+/** Address of the comparison as a file. */
+export function exportHref(candidate: number, base: RunBase, format: ExportFormat): string {
+  return `/api/comparisons/export${toQuery({ ...sides(candidate, base), format })}`;
+}

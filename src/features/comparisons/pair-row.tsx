@@ -37,7 +37,9 @@ function Order({ solve }: { solve: SolveView | null }) {
 }
 
 const digitsOf = (solve: SolveView | null): string =>
-  solve === null || !isSuccess(solve) ? '–' : formatDigits(solve.exact ? 16 : solve.digits);
+  solve === null || !isSuccess(solve)
+    ? '–'
+    : formatDigits(solve.exact ? 16 : solve.digits === null ? null : Math.min(16, solve.digits));
 
 /** Second line of the name: what stands beside the gravest change, how the candidate failed, or the equation. */
 function SecondLine({ pair, equation }: { pair: PairView; equation: string }) {
@@ -77,7 +79,7 @@ export function PairRow({ pair, equation, href, strips, aside }: PairRowProps) {
       <td className="lead-cell name-cell">
         <span className="two">
           <span className="truncate text-ink!">
-            <Link to={href} data-row-link>
+            <Link to={href} data-row-link data-solver={pair.solver}>
               <b className="font-medium">{pair.solver}</b> on {pair.case}
               {pair.start !== null && pair.start > 0 ? `, start ${pair.start + 1}` : ''}
             </Link>
@@ -99,7 +101,7 @@ export function PairRow({ pair, equation, href, strips, aside }: PairRowProps) {
       <td className="fig r digits-cell">
         <Two reference={digitsOf(reference)} candidate={digitsOf(candidate)} />
       </td>
-      <td className="not-narrow">
+      <td className="order-column not-narrow">
         <Two reference={<Order solve={reference} />} candidate={<Order solve={candidate} />} />
       </td>
       <td className="strip-cell">{strips}</td>

@@ -76,7 +76,7 @@ export function PairsTable(props: PairsTableProps) {
         <col style={{ width: 62 }} />
         <col style={{ width: 62 }} />
         <col style={{ width: 58 }} />
-        <col style={{ width: 104 }} />
+        <col className="order-column" style={{ width: 104 }} />
         <col style={{ width: 200 }} />
       </colgroup>
       <thead>
@@ -96,7 +96,9 @@ export function PairsTable(props: PairsTableProps) {
           <th scope="col" className="r">
             digits
           </th>
-          <th scope="col">order</th>
+          <th scope="col" className="order-column">
+            order
+          </th>
           <th scope="col">
             <span className="pl-5">correct digits at each evaluation</span>
             <StripHeader />

@@ -118,7 +118,9 @@ export function TotalsTable({ comparison, pairs, allowanceOf, pairHref }: Totals
             <br />
             found, reference → candidate; claimed
           </th>
-          <th scope="col">the cases, in the suite’s order</th>
+          <th scope="col" className="whitespace-normal!">
+            the cases, in the suite’s order
+          </th>
         </tr>
       </thead>
       <tbody>

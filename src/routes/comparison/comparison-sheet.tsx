@@ -1,4 +1,4 @@
-import { Link, useNavigate } from 'react-router';
+import { Link } from 'react-router';
 import type { Comparison } from '../../../shared/comparison/comparison.ts';
 import { describeComparison } from '../../../shared/comparison/sentences.ts';
 import { effectiveLimit } from '../../../shared/comparison/verdict.ts';
@@ -11,17 +11,16 @@ import { Entry } from '../../components/sheet/entry.tsx';
 import { type Fact, Facts } from '../../components/sheet/facts.tsx';
 import { Page } from '../../components/sheet/page.tsx';
 import { VerdictBlock } from '../../components/sheet/verdict-block.tsx';
-import { Button, ButtonLink } from '../../components/ui/button.tsx';
 import { RichText } from '../../components/ui/rich-text.tsx';
 import { breachSentence, breachTerms } from '../../features/comparisons/breach-sentences.ts';
 import { writeBase } from '../../features/comparisons/comparisons.queries.ts';
 import { findingLines } from '../../features/comparisons/finding-sentences.ts';
 import { TotalsTable } from '../../features/comparisons/totals-table.tsx';
-import { useRunAgain } from '../../features/runs/runs.queries.ts';
 import { allowanceSummary } from '../../lib/allowance-words.ts';
 import { formatCommit, formatDateTime } from '../../lib/format.ts';
-import { useKeys } from '../../lib/use-keys.ts';
 import { paths } from '../../paths.ts';
+import { ComparisonActions } from './comparison-actions.tsx';
+import { ComparisonCosts } from './comparison-costs.tsx';
 import { ComparisonPairs } from './comparison-pairs.tsx';
 
 export interface ComparisonSheetProps {
@@ -67,8 +66,6 @@ function Side({ side, build }: { side: ComparisonView['candidate']; build: boole
 
 /** What a change did: verdict, totals, pairs, query check. */
 export function ComparisonSheet({ comparison, pairs, cases, run, base, allowances }: ComparisonSheetProps) {
-  const navigate = useNavigate();
-  const again = useRunAgain(run.id);
   const words = describeComparison(asComparison(comparison, pairs));
   const back = paths.comparison(run.id, writeBase(base));
   const pairHref = (pair: PairView): string => {
@@ -80,12 +77,6 @@ export function ComparisonSheet({ comparison, pairs, cases, run, base, allowance
   };
   const allowanceOf = (solver: string): number | null =>
     effectiveLimit(allowances.allowances, 'totalPercent', solver, []).limit;
-  const runAgain = (): void =>
-    again.mutate(undefined, { onSuccess: (next) => void navigate(paths.run(next.id)) });
-  useKeys({
-    r: runAgain,
-    escape: () => void navigate(paths.run(run.id)),
-  });
   const findings = findingLines(comparison.totals);
   const quiet = findings.filter((line) => line.sentences.length === 0).map((line) => line.term);
   const facts: Fact[] = [
@@ -121,6 +112,8 @@ export function ComparisonSheet({ comparison, pairs, cases, run, base, allowance
         { keys: ['f'], does: 'narrow' },
         { keys: ['1', '…', '9'], does: 'changes on and off' },
         { keys: ['o'], does: 'another order' },
+        { keys: ['c'], does: 'code beside' },
+        { keys: ['e'], does: 'export' },
         { keys: ['r'], does: 'run again' },
         { keys: ['esc'], does: 'back to the run' },
       ]}
@@ -143,15 +136,7 @@ export function ComparisonSheet({ comparison, pairs, cases, run, base, allowance
                 </span>
               ))
         }
-        actions={
-          <>
-            <Button hotkey="r" onClick={runAgain} disabled={again.isPending}>
-              Run again
-            </Button>
-            <ButtonLink to={paths.run(run.id)}>See the whole run</ButtonLink>
-            {again.error !== null && <span className="text-worse">{again.error.message}</span>}
-          </>
-        }
+        actions={<ComparisonActions run={run} base={base} />}
       >
         <Facts facts={facts} />
       </VerdictBlock>
@@ -175,7 +160,8 @@ export function ComparisonSheet({ comparison, pairs, cases, run, base, allowance
       >
         <TotalsTable comparison={comparison} pairs={pairs} allowanceOf={allowanceOf} pairHref={pairHref} />
       </Entry>
-      <ComparisonPairs pairs={pairs} cases={cases} pairHref={pairHref} />
+      <ComparisonCosts pairs={pairs} candidate={run.id} base={base} />
+      <ComparisonPairs pairs={pairs} cases={cases} pairHref={pairHref} candidate={run.id} base={base} />
       <Entry title="Query check" note="What the paths show without being asked. Findings, not failures.">
         <ul className="finds">
           {findings

@@ -1,14 +1,19 @@
+import { useState } from 'react';
 import { useNavigate } from 'react-router';
 import type { SuiteCase } from '../../../shared/schemas/case.ts';
 import type { RunDetail, SolveView } from '../../../shared/schemas/runs.ts';
 import { VerdictBlock } from '../../components/sheet/verdict-block.tsx';
+import { Ask } from '../../components/ui/ask.tsx';
 import { Button, ButtonLink } from '../../components/ui/button.tsx';
 import { RichText } from '../../components/ui/rich-text.tsx';
+import { TextAction } from '../../components/ui/text-action.tsx';
+import { SetReference } from '../../features/references/set-reference.tsx';
+import { useLacksReference } from '../../features/references/use-lacks-reference.ts';
 import { RunFacts } from '../../features/runs/run-facts.tsx';
 import { RunProgress } from '../../features/runs/run-progress.tsx';
 import { runSentence } from '../../features/runs/run-sentence.ts';
 import { useCancelRun, useRunAgain } from '../../features/runs/runs.queries.ts';
-import { formatCount, formatDateTime } from '../../lib/format.ts';
+import { formatCommit, formatCount, formatDateTime } from '../../lib/format.ts';
 import { useKeys } from '../../lib/use-keys.ts';
 import { paths } from '../../paths.ts';
 
@@ -33,21 +38,25 @@ export function RunHead({ run, solves, cases }: RunHeadProps) {
   const cancel = useCancelRun(run.id);
   const again = useRunAgain(run.id);
   const isLive = run.status === 'queued' || run.status === 'running';
-  const runAgain = (): void =>
-    again.mutate(undefined, { onSuccess: (next) => void navigate(paths.run(next.id)) });
+  const canBeReference = useLacksReference(run);
+  const [open, setOpen] = useState<'again' | 'reference' | null>(null);
+  const flip = (which: 'again' | 'reference'): void => setOpen(open === which ? null : which);
   useKeys({
     s: () => {
       if (isLive) cancel.mutate();
     },
     r: () => {
-      if (!isLive) runAgain();
+      if (!isLive) flip('again');
+    },
+    p: () => {
+      if (canBeReference) flip('reference');
     },
     c: () => {
       if (!isLive && run.against !== null) void navigate(paths.comparison(run.id));
     },
   });
   const hasFailed = run.status === 'failed' || run.status === 'stopped';
-  const problem = cancel.error ?? again.error;
+  const problem = cancel.error;
   return (
     <VerdictBlock
       sign={run.status === 'running' && run.phase === 'confirming' ? 'confirming' : statusWords[run.status]}
@@ -74,9 +83,34 @@ export function RunHead({ run, solves, cases }: RunHeadProps) {
                 Read the comparison
               </ButtonLink>
             )}
-            <Button hotkey="r" onClick={runAgain} disabled={again.isPending}>
+            <Button hotkey="r" aria-expanded={open === 'again'} onClick={() => flip('again')}>
               Run again
             </Button>
+            {canBeReference && (
+              <TextAction hotkey="p" aria-expanded={open === 'reference'} onClick={() => flip('reference')}>
+                Make these results the reference
+              </TextAction>
+            )}
+            {open === 'again' && (
+              <Ask
+                question={
+                  <>
+                    Run <b>{formatCommit(run.build.commit ?? run.build.label)}</b> on {run.suite.slug} again,{' '}
+                    {formatCount(run.progress.planned, 'solve')}? This run stays as it is.
+                  </>
+                }
+                word="Run it again"
+                onYes={() =>
+                  again.mutate(undefined, { onSuccess: (next) => void navigate(paths.run(next.id)) })
+                }
+                onNo={() => setOpen(null)}
+                isBusy={again.isPending}
+                problem={again.error?.message ?? null}
+              />
+            )}
+            {open === 'reference' && (
+              <SetReference run={run} onDone={() => setOpen(null)} onClose={() => setOpen(null)} />
+            )}
           </>
         )
       }
