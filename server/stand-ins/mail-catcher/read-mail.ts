@@ -7,7 +7,7 @@ export interface ReadMail {
 }
 
 function decodeQuotedPrintable(text: string): Buffer {
-  const joined = text.replace(/[ \t]*=\r?\n/g, '');
+  const joined = text.replace(/=[ \t]*\r?\n/g, '');
   const bytes = joined.replace(/=([0-9A-Fa-f]{2})/g, (_all, hex: string) =>
     String.fromCharCode(Number.parseInt(hex, 16)),
   );
