@@ -5,6 +5,7 @@ import { stripEvents } from '../../shared/numerics/strip-events.ts';
 import type { SuiteCase } from '../../shared/schemas/case.ts';
 import { type PathFile, pathFromFile } from '../../shared/schemas/path.ts';
 import type { SolveRecord } from '../../shared/schemas/solve.ts';
+import type { StripEvent } from '../../shared/schemas/strips.ts';
 import type { StripInput } from '../components/digit-strip/strip-layout.ts';
 import type { StripCounts } from '../components/digit-strip/strip-words.ts';
 
@@ -33,6 +34,45 @@ export function attainableDigits(root: SuiteCase['roots'][number]): number {
   return relative === 0 ? 16 : Math.min(16, Math.max(0, -Math.log10(relative)));
 }
 
+function stripPicture(
+  solve: SolveRecord,
+  events: readonly StripEvent[],
+  attainable: number | null,
+): SolvePicture {
+  return {
+    kind: 'strip',
+    strip: { events, outcome: solve.outcome, digits: solve.digits, attainable, exact: solve.exact },
+    counts: {
+      evaluations: solve.evaluations,
+      derivatives: solve.df + solve.d2f,
+      repeated: solve.queryCheck.repeated,
+    },
+  };
+}
+
+/** Of the root that a solve went to; else what all allowed roots have in common, or null. */
+function attainableOf(solve: Pick<SolveRecord, 'nearest'>, suiteCase: SuiteCase): number | null {
+  const own = solve.nearest === null ? undefined : suiteCase.roots[solve.nearest];
+  if (own !== undefined) return attainableDigits(own);
+  const allowed = suiteCase.roots.filter((root) => root.allowed);
+  const digits = (allowed.length > 0 ? allowed : suiteCase.roots).map(attainableDigits);
+  const [first] = digits;
+  return first !== undefined && digits.every((one) => Math.abs(one - first) < 0.05) ? first : null;
+}
+
+/** The picture of a solve from its record, its case and its strip as the server makes it. */
+export function pictureOfStrip(
+  solve: SolveRecord,
+  suiteCase: SuiteCase | undefined,
+  events: readonly StripEvent[] | null,
+): SolvePicture {
+  const words = wordsInsteadOfStrip(solve, suiteCase);
+  if (words !== null || suiteCase === undefined)
+    return { kind: 'words', words: words ?? 'no certified root' };
+  if (events === null) return { kind: 'words', words: 'no path kept' };
+  return stripPicture(solve, events, attainableOf(solve, suiteCase));
+}
+
 /** The picture of a solve from its record, its case and its path. */
 export function pictureOfSolve(
   solve: SolveRecord,
@@ -48,19 +88,5 @@ export function pictureOfSolve(
   const index = rootOfSolve(solve, suiteCase, lastX);
   const root = index === null ? undefined : suiteCase.roots[index];
   if (root === undefined) return { kind: 'words', words: 'no certified root' };
-  return {
-    kind: 'strip',
-    strip: {
-      events: stripEvents(path, rootReference(root.value)),
-      outcome: solve.outcome,
-      digits: solve.digits,
-      attainable: attainableDigits(root),
-      exact: solve.exact,
-    },
-    counts: {
-      evaluations: solve.evaluations,
-      derivatives: solve.df + solve.d2f,
-      repeated: solve.queryCheck.repeated,
-    },
-  };
+  return stripPicture(solve, stripEvents(path, rootReference(root.value)), attainableDigits(root));
 }

@@ -1,5 +1,6 @@
 import { useWindowVirtualizer } from '@tanstack/react-virtual';
 import { type RefObject, useEffect, useRef, useState } from 'react';
+import { flushSync } from 'react-dom';
 
 export interface VisibleRows {
   ref: RefObject<HTMLTableElement | null>;
@@ -13,10 +14,27 @@ export interface VisibleRows {
 
 const drawAllUpTo = 80;
 
-/** Which rows of a long table are drawn. Short tables are drawn whole, so that they print and can be searched. */
+/** Whether the page is being printed; then there is no window that rows could be out of. */
+function useIsPrinting(): boolean {
+  const [isPrinting, setIsPrinting] = useState(false);
+  useEffect(() => {
+    const begin = (): void => flushSync(() => setIsPrinting(true));
+    const end = (): void => setIsPrinting(false);
+    window.addEventListener('beforeprint', begin);
+    window.addEventListener('afterprint', end);
+    return () => {
+      window.removeEventListener('beforeprint', begin);
+      window.removeEventListener('afterprint', end);
+    };
+  }, []);
+  return isPrinting;
+}
+
+/** Which rows of a long table are drawn. Short tables are drawn whole, so that they can be searched; all print. */
 export function useVisibleRows(count: number, rowHeight: number): VisibleRows {
   const ref = useRef<HTMLTableElement>(null);
   const [top, setTop] = useState(0);
+  const isPrinting = useIsPrinting();
   const isLong = count > drawAllUpTo;
   useEffect(() => {
     if (isLong && ref.current !== null) setTop(ref.current.getBoundingClientRect().top + window.scrollY);
@@ -27,7 +45,7 @@ export function useVisibleRows(count: number, rowHeight: number): VisibleRows {
     overscan: 12,
     scrollMargin: top,
   });
-  if (!isLong) return { ref, from: 0, to: count, before: 0, after: 0, measure: undefined };
+  if (!isLong || isPrinting) return { ref, from: 0, to: count, before: 0, after: 0, measure: undefined };
   const items = virtualizer.getVirtualItems();
   const first = items[0];
   const last = items.at(-1);

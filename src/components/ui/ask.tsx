@@ -38,34 +38,36 @@ export function Ask({
     };
   }, []);
   return (
-    <form
-      ref={form}
-      aria-label={word}
-      className="grid w-full max-w-[46em] gap-3 border-t border-rule-strong pt-3"
-      onSubmit={(event) => {
-        event.preventDefault();
-        if (isPossible && !isBusy) onYes();
-      }}
-      onKeyDown={(event) => {
-        if (event.key !== 'Escape') return;
-        event.preventDefault();
-        event.stopPropagation();
-        onNo();
-      }}
-    >
-      <p className="text-lead">{question}</p>
-      {children}
-      {problem !== null && (
-        <p role="alert" className="text-worse">
-          {problem}
-        </p>
-      )}
-      <div className="flex flex-wrap items-center gap-x-5.5 gap-y-2">
-        <Button type="submit" isMain disabled={isBusy || !isPossible}>
-          {word}
-        </Button>
-        <TextAction onClick={onNo}>Leave it</TextAction>
-      </div>
-    </form>
+    <div className="basis-full">
+      <form
+        ref={form}
+        aria-label={word}
+        className="grid max-w-[46em] gap-3 border-t border-rule-strong pt-3"
+        onSubmit={(event) => {
+          event.preventDefault();
+          if (isPossible && !isBusy) onYes();
+        }}
+        onKeyDown={(event) => {
+          if (event.key !== 'Escape') return;
+          event.preventDefault();
+          event.stopPropagation();
+          onNo();
+        }}
+      >
+        <p className="text-lead">{question}</p>
+        {children}
+        {problem !== null && (
+          <p role="alert" className="text-worse">
+            {problem}
+          </p>
+        )}
+        <div className="flex flex-wrap items-center gap-x-5.5 gap-y-2">
+          <Button type="submit" isMain disabled={isBusy || !isPossible}>
+            {word}
+          </Button>
+          <TextAction onClick={onNo}>Leave it</TextAction>
+        </div>
+      </form>
+    </div>
   );
 }

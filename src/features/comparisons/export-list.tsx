@@ -23,25 +23,27 @@ export function ExportList({ candidate, base, onClose }: ExportListProps) {
     list.current?.querySelector('a')?.focus();
   }, []);
   return (
-    <ul
-      ref={list}
-      aria-label="Files"
-      className="finds w-full max-w-[46em]"
-      onKeyDown={(event) => {
-        if (event.key !== 'Escape') return;
-        event.preventDefault();
-        event.stopPropagation();
-        onClose();
-      }}
-    >
-      {exportFormats.map((format) => (
-        <li key={format}>
-          <a href={exportHref(candidate, base, format)} download className="font-medium">
-            {words[format].name}
-          </a>
-          <span className="text-table text-ink-2">{words[format].holds}</span>
-        </li>
-      ))}
-    </ul>
+    <div className="basis-full">
+      <ul
+        ref={list}
+        aria-label="Files"
+        className="finds max-w-[46em]"
+        onKeyDown={(event) => {
+          if (event.key !== 'Escape') return;
+          event.preventDefault();
+          event.stopPropagation();
+          onClose();
+        }}
+      >
+        {exportFormats.map((format) => (
+          <li key={format}>
+            <a href={exportHref(candidate, base, format)} download className="justify-self-start font-medium">
+              {words[format].name}
+            </a>
+            <span className="text-table text-ink-2">{words[format].holds}</span>
+          </li>
+        ))}
+      </ul>
+    </div>
   );
 }

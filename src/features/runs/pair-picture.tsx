@@ -3,7 +3,7 @@ import type { SolveView } from '../../../shared/schemas/runs.ts';
 import { stripHeight } from '../../components/digit-strip/digit-strip.tsx';
 import { StripPair } from '../../components/digit-strip/strip-pair.tsx';
 import type { SolvePicture } from '../../lib/strip-of-solve.ts';
-import { useSeen } from '../../lib/use-seen.ts';
+import { useDrawn } from '../../lib/use-drawn.ts';
 import { useSolvePicture } from './solve-picture.tsx';
 
 export interface PairPictureProps {
@@ -16,7 +16,7 @@ const stripOf = (picture: SolvePicture | undefined) => (picture?.kind === 'strip
 
 /** Both strips of a pair, the reference above; words where the case has no root. */
 export function PairPicture({ reference, candidate, suiteCase }: PairPictureProps) {
-  const [box, isSeen] = useSeen<HTMLDivElement>();
+  const [box, isSeen] = useDrawn<HTMLDivElement>();
   const above = useSolvePicture(reference, suiteCase, isSeen);
   const below = useSolvePicture(candidate, suiteCase, isSeen);
   const isReady = above !== undefined && below !== undefined;

@@ -1,4 +1,5 @@
 import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
+import { AppError } from '../../../shared/errors.ts';
 import {
   type RunsQuery,
   runDetail,
@@ -8,7 +9,9 @@ import {
   solveDetail,
   solvePage,
 } from '../../../shared/schemas/runs.ts';
+import { type StripEvent, solveStripList } from '../../../shared/schemas/strips.ts';
 import { apiGet, apiGetAll, apiSend } from '../../lib/api.ts';
+import { createBatch } from '../../lib/batch.ts';
 
 export const runKeys = {
   all: ['runs'] as const,
@@ -58,6 +61,27 @@ export const solveQuery = (id: number) =>
   queryOptions({
     queryKey: ['solves', id] as const,
     queryFn: ({ signal }) => apiGet(solveDetail, `/solves/${id}`, signal),
+    staleTime: Number.POSITIVE_INFINITY,
+  });
+
+/** Tables ask for hundreds of strips at once; they are read together, as many as an address holds. */
+const readStrip = createBatch<{ events: StripEvent[] | null }>(
+  {
+    most: 200,
+    waitMs: 15,
+    async load(ids) {
+      const { items } = await apiGet(solveStripList, `/strips?solves=${ids.join(',')}`);
+      return new Map(items.map(({ solve, events }) => [solve, { events }]));
+    },
+  },
+  () => new AppError('not_found', 'This solve is no longer there.'),
+);
+
+/** The digit strip of a solve. It never changes once it is stored. */
+export const stripQuery = (solve: number) =>
+  queryOptions({
+    queryKey: ['strips', solve] as const,
+    queryFn: () => readStrip(solve),
     staleTime: Number.POSITIVE_INFINITY,
   });
 

@@ -4,24 +4,25 @@ import { isSuccess } from '../../../shared/numerics/judge-claim.ts';
 import type { SuiteCase } from '../../../shared/schemas/case.ts';
 import type { SolveView } from '../../../shared/schemas/runs.ts';
 import { DigitStrip, stripWidth } from '../../components/digit-strip/digit-strip.tsx';
-import { pictureOfSolve, type SolvePicture, wordsInsteadOfStrip } from '../../lib/strip-of-solve.ts';
-import { useSeen } from '../../lib/use-seen.ts';
-import { solveQuery } from './runs.queries.ts';
+import { pictureOfStrip, type SolvePicture, wordsInsteadOfStrip } from '../../lib/strip-of-solve.ts';
+import { useDrawn } from '../../lib/use-drawn.ts';
+import { stripQuery } from './runs.queries.ts';
 
-/** The picture of a stored solve; undefined while its path is read. */
+/** The picture of a stored solve; undefined while its strip is read. */
 export function useSolvePicture(
   solve: SolveView | null,
   suiteCase: SuiteCase | undefined,
   isSeen: boolean,
 ): SolvePicture | undefined {
   const words = solve === null ? 'not there' : wordsInsteadOfStrip(solve, suiteCase);
-  const query = useQuery({ ...solveQuery(solve?.id ?? 0), enabled: isSeen && words === null });
-  const file = query.data?.path;
+  const query = useQuery({ ...stripQuery(solve?.id ?? 0), enabled: isSeen && words === null });
+  const strip = query.data;
   return useMemo(() => {
     if (words !== null) return { kind: 'words', words };
-    if (solve === null || file === undefined) return undefined;
-    return pictureOfSolve(solve, suiteCase, file);
-  }, [words, solve, suiteCase, file]);
+    if (query.isError) return { kind: 'words', words: 'could not be read' };
+    if (solve === null || strip === undefined) return undefined;
+    return pictureOfStrip(solve, suiteCase, strip.events);
+  }, [words, solve, suiteCase, strip, query.isError]);
 }
 
 export interface SolvePictureCellProps {
@@ -34,7 +35,7 @@ const isFailure = (solve: SolveView): boolean => !isSuccess(solve) && solve.outc
 
 /** A strip, or the words that stand for it; an empty place of the same size while it is read. */
 export function SolvePictureCell({ solve, suiteCase, pitch }: SolvePictureCellProps) {
-  const [box, isSeen] = useSeen<HTMLSpanElement>();
+  const [box, isSeen] = useDrawn<HTMLSpanElement>();
   const picture = useSolvePicture(solve, suiteCase, isSeen);
   return (
     <span

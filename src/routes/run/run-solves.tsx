@@ -8,6 +8,7 @@ import { StateNote } from '../../components/ui/state-note.tsx';
 import { SolveFilter } from '../../features/runs/solve-filter.tsx';
 import { buildMatrix, filterMatrix, outcomeWord } from '../../features/runs/solve-matrix.ts';
 import { SolveTable, solversThatFit } from '../../features/runs/solve-table.tsx';
+import { useStripsAhead } from '../../features/runs/use-strips-ahead.ts';
 import { moveCellFocus } from '../../lib/cell-focus.ts';
 import { formatCount } from '../../lib/format.ts';
 import { useKeys } from '../../lib/use-keys.ts';
@@ -24,6 +25,7 @@ export interface RunSolvesProps {
 /** The table of solves with its filters; what is shown stands in the address. */
 export function RunSolves({ run, solves, cases }: RunSolvesProps) {
   const view = useViewState();
+  useStripsAhead(solves, run.status === 'queued' || run.status === 'running');
   const textField = useRef<HTMLInputElement>(null);
   const [box, width] = useWidth<HTMLDivElement>(1180);
   const names = run.solvers.map((solver) => solver.declaration.name);

@@ -9,7 +9,7 @@ import { findingRows } from '../../../src/features/solves/query-findings.ts';
 import { pairOfSolves, pairSentence } from '../../../src/features/solves/solve-pair.ts';
 import { aloneSentence } from '../../../src/features/solves/solve-sentence.ts';
 import { solveSide } from '../../../src/features/solves/solve-side.ts';
-import { attainableDigits, pictureOfSolve } from '../../../src/lib/strip-of-solve.ts';
+import { attainableDigits, pictureOfSolve, pictureOfStrip } from '../../../src/lib/strip-of-solve.ts';
 import { rightRefusal, someCase, someSolve, someSolver } from './builders.ts';
 
 /** x² − 3 by a secant that really runs; `isForgetful` asks for both ends at every step. */
@@ -182,6 +182,25 @@ describe('picture of a solve', () => {
       words: 'no root here; false claim',
     });
     expect(words({}, suiteCase, null)).toEqual({ kind: 'words', words: 'no path kept' });
+  });
+
+  it('is the same from a strip that the server made as from the path', () => {
+    const whole = pictureOfSolve(kept, suiteCase, kept.path);
+    if (whole.kind !== 'strip') throw new Error('the solve has a strip');
+    expect(pictureOfStrip(kept, suiteCase, whole.strip.events)).toEqual(whole);
+    expect(pictureOfStrip(kept, suiteCase, null)).toEqual({ kind: 'words', words: 'no path kept' });
+  });
+
+  it('has no post of attainable digits where a solve went to no root and the roots differ in it', () => {
+    const [root] = suiteCase.roots;
+    if (root === undefined) throw new Error('the case has a root');
+    const lost = { ...kept, nearest: null };
+    const postOf = (roots: (typeof root)[]) => {
+      const picture = pictureOfStrip(lost, { ...suiteCase, roots }, []);
+      return picture.kind === 'strip' ? picture.strip.attainable : undefined;
+    };
+    expect(postOf([root])).toBe(attainableDigits(root));
+    expect(postOf([root, { ...root, attainable: root.attainable * 1000 + 1e-9 }])).toBeNull();
   });
 
   it('takes the attainable digits from F relative to the root, cut to 16', () => {
