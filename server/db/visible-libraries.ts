@@ -1,5 +1,4 @@
 import { type SQL, sql } from 'drizzle-orm';
-import type { SQLiteColumn } from 'drizzle-orm/sqlite-core';
 
 /** The libraries that exist for somebody. */
 export type VisibleLibraries =
@@ -9,12 +8,19 @@ export type VisibleLibraries =
   /** Public ones, and those that the person is a member of. */
   | { kind: 'of person'; person: string };
 
-/** For queries on rows of many libraries: that the row is of one that is visible. */
-export function isOfVisible(libraryId: SQLiteColumn, visible: VisibleLibraries): SQL | undefined {
+/**
+ * For queries on rows of many libraries: that the row is of one that is visible. The column is written out
+ * with its table: without it, as in a query on one table, it would be taken for one of the tables in here.
+ */
+export function isOfVisible(
+  column: 'libraries.id' | 'runs.library_id',
+  visible: VisibleLibraries,
+): SQL | undefined {
+  const libraryId = sql.raw(column);
   if (visible.kind === 'all') return undefined;
   if (visible.kind === 'none') return sql`false`;
   if (visible.kind === 'one') return sql`${libraryId} = ${visible.library}`;
-  return sql`${libraryId} in (
-    select l.id from libraries as l where l.visibility = 'public'
-    union all select m.library_id from members as m where m.user_id = ${visible.person})`;
+  // Asked row by row, so that the order of the list decides which index is used.
+  return sql`exists (select 1 from libraries as l where l.id = ${libraryId} and (l.visibility = 'public'
+    or exists (select 1 from members as m where m.user_id = ${visible.person} and m.library_id = l.id)))`;
 }

@@ -1,3 +1,4 @@
+import { DrizzleQueryError } from 'drizzle-orm';
 import type { ErrorRequestHandler, RequestHandler } from 'express';
 import type { Logger } from 'pino';
 import { AppError, type ErrorCode, errorStatus } from '../../shared/errors.ts';
@@ -32,13 +33,21 @@ function toAppError(error: unknown): AppError {
   });
 }
 
+/** A query that failed is logged without its parameters, which can be somebody's secrets. */
+function loggable(error: unknown): unknown {
+  return error instanceof DrizzleQueryError ? (error.cause ?? new Error('a query failed')) : error;
+}
+
 /** Every error leaves here, as problem details (RFC 9457). What is unexpected is logged and told nothing of. */
 export function errorHandler(logger: Logger): ErrorRequestHandler {
   return (error: unknown, request, response, next) => {
     const known = toAppError(error);
     const requestId = requestIdOf(response);
     if (known.code === 'internal')
-      logger.error({ err: known.cause ?? known, requestId, url: request.originalUrl }, 'request failed');
+      logger.error(
+        { err: loggable(known.cause ?? known), requestId, url: request.originalUrl },
+        'request failed',
+      );
     if (response.headersSent) {
       next(error);
       return;

@@ -18,5 +18,8 @@ export const mailOutbox = sqliteTable(
     createdAt: time('created_at').notNull(),
     sentAt: time('sent_at'),
   },
-  (table) => [index('mail_outbox_due').on(table.state, table.nextAt)],
+  (table) => [
+    index('mail_outbox_due').on(table.state, table.nextAt),
+    index('mail_outbox_state').on(table.state, table.id),
+  ],
 );

@@ -49,7 +49,7 @@ export function createLibrariesRepo(db: Db) {
         .from(libraries)
         .where(
           and(
-            options.visible && isOfVisible(libraries.id, options.visible),
+            options.visible && isOfVisible('libraries.id', options.visible),
             options.after === undefined ? undefined : gt(libraries.slug, options.after),
           ),
         )

@@ -1,4 +1,4 @@
-import { and, asc, count, desc, eq, gt, inArray, isNull, ne, or, sql } from 'drizzle-orm';
+import { and, asc, count, desc, eq, gt, inArray, isNull, ne, sql } from 'drizzle-orm';
 import { AppError } from '../../../shared/errors.ts';
 import { type Db, isConstraintError } from '../../db/client.ts';
 import { libraries } from '../../db/schema/libraries.ts';
@@ -57,7 +57,7 @@ export function createPeopleRepo(db: Db) {
             options.text === undefined
               ? undefined
               : sql`(${users.name} like ${like} escape '\\' or ${users.email} like ${like} escape '\\')`,
-            after && or(gt(users.name, after[0]), and(eq(users.name, after[0]), gt(users.id, after[1]))),
+            after && sql`(${users.name}, ${users.id}) > (${after[0]}, ${after[1]})`,
           ),
         )
         .orderBy(asc(users.name), asc(users.id))

@@ -96,7 +96,7 @@ export function createRunsRepo(client: DatabaseClient) {
         filter.buildId === undefined ? undefined : eq(runs.buildId, filter.buildId),
         filter.suiteId === undefined ? undefined : eq(runs.suiteId, filter.suiteId),
         filter.status === undefined ? undefined : eq(runs.status, filter.status),
-        filter.visible && isOfVisible(runs.libraryId, filter.visible),
+        filter.visible && isOfVisible('runs.library_id', filter.visible),
         filter.before === undefined ? undefined : lt(runs.id, filter.before),
       ];
       return selectNamed()

@@ -4,6 +4,7 @@ import { createAuditRepo } from '../../../server/features/audit/audit.repo.ts';
 import { createBuildsRepo } from '../../../server/features/builds/builds.repo.ts';
 import { createLibrariesRepo } from '../../../server/features/libraries/libraries.repo.ts';
 import { trendRunsSql, trendSql } from '../../../server/features/libraries/trends.repo.ts';
+import { createPeopleRepo } from '../../../server/features/people/people.repo.ts';
 import {
   createReferencesRepo,
   entriesPageQuery,
@@ -13,6 +14,7 @@ import { solveListSql } from '../../../server/features/runs/solve-list.repo.ts';
 import { createSolversRepo } from '../../../server/features/solvers/solvers.repo.ts';
 import { createSuitesRepo } from '../../../server/features/suites/suites.repo.ts';
 import { nextJobSql } from '../../../server/jobs/queue.ts';
+import { createOutboxRepo } from '../../../server/mail/outbox.repo.ts';
 import { solveSorts } from '../../../shared/schemas/runs.ts';
 import { openTestApp } from '../../helpers/app.ts';
 
@@ -32,6 +34,23 @@ function plan(query: { toSQL(): { sql: string; params: unknown[] } }): string {
 describe('query plans', () => {
   const limit = 51;
   const lists: [string, string, RegExp][] = [
+    [
+      'runs of what is visible',
+      plan(
+        createRunsRepo(client).listQuery({ visible: { kind: 'of person', person: 'x' }, before: 9, limit }),
+      ),
+      /SEARCH runs USING INTEGER PRIMARY KEY \(rowid<\?\)[\s\S]*SEARCH l (EXISTS )?USING INTEGER PRIMARY KEY/,
+    ],
+    [
+      'people',
+      plan(createPeopleRepo(client.db).listQuery({ after: ['a', 'b'], limit })),
+      /USING INDEX users_name/,
+    ],
+    [
+      'mails in a state',
+      plan(createOutboxRepo(client.db).listQuery({ state: 'waiting', before: 9, limit })),
+      /SEARCH mail_outbox USING INDEX mail_outbox_state \(state=\? AND id<\?\)/,
+    ],
     [
       'runs of a library',
       plan(createRunsRepo(client).listQuery({ libraryId: 1, before: 9, limit })),

@@ -1,0 +1,1 @@
+CREATE INDEX `mail_outbox_state` ON `mail_outbox` (`state`,`id`);
