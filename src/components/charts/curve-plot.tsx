@@ -23,6 +23,17 @@ export interface CurvePlotProps {
   around?: readonly number[];
   /** Draw the chords between the first points. */
   hasChords?: boolean;
+  /** Shows this stretch instead of the one that the points make. */
+  range?: Range | null;
+  /** One point set off from the others, with the line that the method goes along from it. */
+  current?: CurrentPoint | null;
+}
+
+export interface CurrentPoint extends AskedPoint {
+  /** Slope of the tangent, where f′ is known. */
+  slope: number | null;
+  /** The other end of the chord, where there is one. */
+  from: AskedPoint | null;
 }
 
 const height = 300;
@@ -115,6 +126,39 @@ function AskedMarks({ asked, frame, zero }: { asked: readonly AskedPoint[]; fram
   );
 }
 
+/** The point that is looked at: a square on the curve, its height, and the tangent or chord through it. */
+function CurrentMark({
+  current,
+  across,
+  frame,
+  zero,
+}: {
+  current: CurrentPoint;
+  across: Range;
+  frame: Frame;
+  zero: number;
+}) {
+  const { x, y, slope, from } = current;
+  if (!Number.isFinite(x) || !Number.isFinite(y)) return null;
+  const steepness =
+    slope ?? (from !== null && Number.isFinite(from.y) && from.x !== x ? (y - from.y) / (x - from.x) : null);
+  const lineAt = (at: number): number => frame.py(y + (steepness ?? 0) * (at - x));
+  return (
+    <>
+      {steepness !== null && (
+        <path
+          d={`M${frame.px(across.low)} ${lineAt(across.low)}L${frame.px(across.high)} ${lineAt(across.high)}`}
+          stroke="var(--ref)"
+          strokeWidth={1.2}
+          strokeDasharray={slope === null ? undefined : '6 3'}
+        />
+      )}
+      <path className="draw-limit-long" d={`M${frame.px(x)} ${zero}V${frame.py(y)}`} />
+      <rect x={frame.px(x) - 4} y={frame.py(y) - 4} width={8} height={8} fill="var(--ink)" />
+    </>
+  );
+}
+
 function Grid({ across, up, frame, right }: { across: Range; up: Range; frame: Frame; right: number }) {
   return (
     <>
@@ -137,14 +181,24 @@ function Grid({ across, up, frame, right }: { across: Range; up: Range; frame: F
 
 /** f over a range, evaluated here by the same arithmetic as the solver's answers. */
 export function CurvePlot(props: CurvePlotProps) {
-  const { equation, parameters, bracket, roots, asked = [], around = [], hasChords = false } = props;
+  const {
+    equation,
+    parameters,
+    bracket,
+    roots,
+    asked = [],
+    around = [],
+    hasChords = false,
+    range = null,
+    current = null,
+  } = props;
   const [box, width] = useWidth<HTMLDivElement>(540);
   const clip = useId();
   const f = useMemo(() => {
     const values = Object.fromEntries(Object.entries(parameters).map(([name, text]) => [name, Number(text)]));
     return interpretDouble(parseEquation(equation, Object.keys(parameters)), values).f;
   }, [equation, parameters]);
-  const across = xRange(bracket, [...around, ...asked.map((point) => point.x)], roots);
+  const across = range ?? xRange(bracket, [...around, ...asked.map((point) => point.x)], roots);
   const curve = useMemo(
     () =>
       Array.from({ length: samples + 1 }, (_, index) => {
@@ -153,7 +207,10 @@ export function CurvePlot(props: CurvePlotProps) {
       }),
     [f, across.low, across.high],
   );
-  const up = yRange([...curve.map((point) => point.y), ...asked.slice(0, 6).map((point) => point.y)]);
+  const up = yRange([
+    ...curve.map((point) => point.y),
+    ...(range === null ? asked.slice(0, 6).map((point) => point.y) : []),
+  ]);
   const right = width - margin.right;
   const bottom = height - margin.bottom;
   const frame: Frame = {
@@ -191,6 +248,7 @@ export function CurvePlot(props: CurvePlotProps) {
             stroke="var(--ink)"
             strokeWidth={1.6}
           />
+          {current !== null && <CurrentMark current={current} across={across} frame={frame} zero={zero} />}
         </g>
         <AskedMarks asked={asked} frame={frame} zero={zero} />
         {dots.map((root) => (

@@ -4,8 +4,9 @@ import { Entry } from '../../components/sheet/entry.tsx';
 import { Page } from '../../components/sheet/page.tsx';
 import { QueryState } from '../../components/ui/query-state.tsx';
 import { StateNote } from '../../components/ui/state-note.tsx';
+import { allowancesQuery } from '../../features/libraries/libraries.queries.ts';
 import { runQuery, solveQuery } from '../../features/runs/runs.queries.ts';
-import { suiteRevisionQuery } from '../../features/suites/suites.queries.ts';
+import { suiteRevisionQuery, suitesQuery } from '../../features/suites/suites.queries.ts';
 import { useViewState } from '../../lib/use-view-state.ts';
 import { paths } from '../../paths.ts';
 import { SolveSheet } from './solve-sheet.tsx';
@@ -23,13 +24,24 @@ export function SolvePage() {
   const solve = useQuery(solveQuery(id));
   const reference = useQuery({ ...solveQuery(againstId ?? 0), enabled: againstId !== null });
   const run = useQuery({ ...runQuery(solve.data?.run ?? 0), enabled: solve.data !== undefined });
+  const referenceRun = useQuery({
+    ...runQuery(reference.data?.run ?? 0),
+    enabled: reference.data !== undefined,
+  });
+  const allowances = useQuery({
+    ...allowancesQuery(run.data?.library ?? ''),
+    enabled: run.data !== undefined && againstId !== null,
+  });
+  const suites = useQuery(suitesQuery);
   const suite = run.data?.suite;
   const revision = useQuery({
     ...suiteRevisionQuery(suite?.slug ?? '', suite?.revision ?? 0),
     enabled: suite !== undefined,
   });
   const suiteCase = revision.data?.cases.find((one) => one.id === solve.data?.case);
-  const isReferenceReady = againstId === null || reference.data !== undefined;
+  const isReferenceReady =
+    againstId === null ||
+    (reference.data !== undefined && referenceRun.data !== undefined && allowances.data !== undefined);
   if (solve.data && run.data && suiteCase && isReferenceReady) {
     return (
       <SolveSheet
@@ -38,11 +50,19 @@ export function SolvePage() {
         reference={reference.data ?? null}
         run={run.data}
         suiteCase={suiteCase}
+        referenceRun={referenceRun.data ?? null}
+        allowances={allowances.data ?? null}
+        isBuiltInSuite={suites.data?.find((one) => one.slug === suite?.slug)?.builtIn ?? true}
         backTo={backFrom(view.get('back'), paths.run(run.data.id))}
       />
     );
   }
-  const waiting = [solve, ...(againstId === null ? [] : [reference]), run, revision];
+  const waiting = [
+    solve,
+    ...(againstId === null ? [] : [reference, referenceRun, allowances]),
+    run,
+    revision,
+  ];
   const shown = waiting.find((query) => query.isError) ?? waiting.find((query) => query.data === undefined);
   return (
     <Page

@@ -42,7 +42,9 @@ export function SolvePlots({ reference, candidate, suiteCase, attainable }: Solv
           Strokes on the axis are the x’s asked for, numbered in order
           {candidate.solve.declaration.starts === 2 || candidate.solve.declaration.takes === 'bracket'
             ? '; straight lines are chords between them.'
-            : '.'}
+            : '.'}{' '}
+          Walking through sets one off: its height, and dashed the tangent where f′ was asked for, else the
+          chord to the x before it.
         </figcaption>
       </figure>
     </div>

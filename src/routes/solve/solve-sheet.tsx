@@ -1,6 +1,7 @@
 import { useMemo } from 'react';
-import { useNavigate } from 'react-router';
+import { Link, useNavigate } from 'react-router';
 import { isRightlyRefused } from '../../../shared/numerics/judge-claim.ts';
+import type { AllowanceRevisionView } from '../../../shared/schemas/allowance-revisions.ts';
 import type { SuiteCase } from '../../../shared/schemas/case.ts';
 import type { RunDetail, SolveDetail } from '../../../shared/schemas/runs.ts';
 import { LargeStrip, type LargeStripRow } from '../../components/digit-strip/large-strip.tsx';
@@ -12,7 +13,9 @@ import { Page } from '../../components/sheet/page.tsx';
 import { VerdictBlock } from '../../components/sheet/verdict-block.tsx';
 import { RichText } from '../../components/ui/rich-text.tsx';
 import { StateNote } from '../../components/ui/state-note.tsx';
+import { TextAction } from '../../components/ui/text-action.tsx';
 import { HomeCommand } from '../../features/solves/home-command.tsx';
+import { homeLines } from '../../features/solves/home-lines.ts';
 import { pathRows } from '../../features/solves/path-rows.ts';
 import { PathTable } from '../../features/solves/path-table.tsx';
 import { findingRows } from '../../features/solves/query-findings.ts';
@@ -20,6 +23,7 @@ import { SolveFacts } from '../../features/solves/solve-facts.tsx';
 import { pairOfSolves, pairSentence } from '../../features/solves/solve-pair.ts';
 import { aloneSentence, pairLead } from '../../features/solves/solve-sentence.ts';
 import { type SolveSide, solveSide } from '../../features/solves/solve-side.ts';
+import { allowanceSummary } from '../../lib/allowance-words.ts';
 import { formatCommit } from '../../lib/format.ts';
 import { useKeys } from '../../lib/use-keys.ts';
 import { useViewState } from '../../lib/use-view-state.ts';
@@ -31,6 +35,11 @@ export interface SolveSheetProps {
   reference: SolveDetail | null;
   run: RunDetail;
   suiteCase: SuiteCase;
+  /** The run of the reference's solve, and the allowances that the pair is judged by. */
+  referenceRun: RunDetail | null;
+  allowances: AllowanceRevisionView | null;
+  /** Whether the suite comes with the product. */
+  isBuiltInSuite: boolean;
   /** Where Escape leads: the comparison or the run that the reader came from. */
   backTo: string;
 }
@@ -50,7 +59,8 @@ function jumpTo(step: 'first' | 'next'): void {
 }
 
 /** A solve, alone or beside the reference's: strips, path, plots, query check, the command to repeat it. */
-export function SolveSheet({ solve, reference, run, suiteCase, backTo }: SolveSheetProps) {
+export function SolveSheet(props: SolveSheetProps) {
+  const { solve, reference, run, suiteCase, backTo, referenceRun, allowances } = props;
   const view = useViewState();
   const navigate = useNavigate();
   const isHex = view.get('bits') === 'hex';
@@ -66,9 +76,15 @@ export function SolveSheet({ solve, reference, run, suiteCase, backTo }: SolveSh
     x: () => view.set({ bits: isHex ? '' : 'hex' }),
     escape: () => void navigate(backTo),
   });
+  // Where one of the two has not been said, it is taken for the other's: nothing is known against it.
+  const prints = [run.environment?.fingerprint, referenceRun?.environment?.fingerprint];
+  const isExact = prints.includes(undefined) || prints[0] === prints[1];
   const pair = useMemo(
-    () => (reference === null ? null : pairOfSolves(reference, solve, suiteCase)),
-    [reference, solve, suiteCase],
+    () =>
+      reference === null || allowances === null
+        ? null
+        : pairOfSolves(reference, solve, suiteCase, { allowances: allowances.allowances, isExact }),
+    [reference, solve, suiteCase, allowances, isExact],
   );
   const attainable = candidateSide.picture.kind === 'strip' ? candidateSide.picture.strip.attainable : null;
   const strips = [
@@ -78,12 +94,15 @@ export function SolveSheet({ solve, reference, run, suiteCase, backTo }: SolveSh
   const said = solve.remarks.filter((remark) => !['rightly refused', 'path cut'].includes(remark.code));
   const hasRoots = suiteCase.roots.length > 0;
   const name = `${solve.solver} on ${solve.case}`;
-  const only = `--solver ${solve.solver} --case ${solve.case}`;
   const isOneOfMany = solve.start !== null && suiteCase.starts.length > 1;
-  const command = [
-    `npm run tallyroot -- measure --build DIR --suite ${run.suite.slug} ${only} --json solve.json`,
-    `npm run tallyroot -- trace solve.json ${only}${isOneOfMany ? ` --start ${(solve.start ?? 0) + 1}` : ''}`,
-  ].join('\n');
+  const command = homeLines({
+    solver: solve.solver,
+    case: solve.case,
+    start: isOneOfMany ? (solve.start ?? 0) + 1 : null,
+    suite: run.suite.slug,
+    isBuiltIn: props.isBuiltInSuite,
+    isFresh: run.settings.fresh,
+  }).join('\n');
   return (
     <Page
       title={name}
@@ -104,6 +123,8 @@ export function SolveSheet({ solve, reference, run, suiteCase, backTo }: SolveSh
               { keys: ['n'], does: 'next difference' },
             ]),
         { keys: ['x'], does: isHex ? 'decimal figures' : 'exact hexadecimal' },
+        { keys: ['[', ']'], does: 'walk through the evaluations' },
+        { keys: ['z'], does: 'close up' },
         { keys: ['y'], does: 'copy the command' },
         { keys: ['esc'], does: 'back' },
       ]}
@@ -118,13 +139,18 @@ export function SolveSheet({ solve, reference, run, suiteCase, backTo }: SolveSh
         }
         colour={pair === null ? undefined : changeColour[pair.change]}
         note={
-          pair !== null && pair.others.length > 0 ? (
-            <p className="flex flex-wrap gap-x-3">
-              {pair.others.map((other) => (
-                <ChangeWord key={other} change={other} />
-              ))}
-            </p>
-          ) : undefined
+          pair === null || allowances === null ? undefined : (
+            <>
+              {pair.others.length > 0 && (
+                <p className="flex flex-wrap gap-x-3">
+                  {pair.others.map((other) => (
+                    <ChangeWord key={other} change={other} />
+                  ))}
+                </p>
+              )}
+              <p>{allowanceSummary(allowances.number, allowances.allowances.base)}</p>
+            </>
+          )
         }
         sentence={<RichText pieces={pair === null ? aloneSentence(solve) : pairSentence(pair, solve)} />}
         lead={
@@ -139,6 +165,13 @@ export function SolveSheet({ solve, reference, run, suiteCase, backTo }: SolveSh
           caseHref={paths.suiteCase(run.suite.slug, suiteCase.id, run.suite.revision)}
           budget={run.settings.evaluations}
         />
+        {!isExact && (
+          <p className="mt-3 max-w-[60em] border-l-3 border-ink pl-3">
+            Other arithmetic: the two were measured with different fingerprints, so last places may differ
+            without a change in the build, and <b>drifted</b> is not told.{' '}
+            <Link to={paths.guideChapter('fingerprint')}>What the fingerprint is</Link>
+          </p>
+        )}
       </VerdictBlock>
       <Entry
         title="Digit strip"
@@ -164,6 +197,16 @@ export function SolveSheet({ solve, reference, run, suiteCase, backTo }: SolveSh
           {referenceSide === null
             ? 'Every evaluation in order, with the correct digits of its x. The stroke at the right stands at them.'
             : 'Places that differ are underlined. A dot: the other build asked here, this one did not. The stroke at the right stands at the correct digits.'}
+        </p>
+        <p className="no-print flex flex-wrap gap-x-5.5 text-table">
+          <TextAction hotkey="x" aria-pressed={isHex} onClick={() => view.set({ bits: isHex ? '' : 'hex' })}>
+            {isHex ? 'decimal figures' : 'the exact bits'}
+          </TextAction>
+          {reference !== null && (
+            <TextAction hotkey="d" onClick={() => jumpTo('first')}>
+              to the first difference
+            </TextAction>
+          )}
         </p>
       </Entry>
       <section className="ledger pt-2" aria-label="Path, line by line">
@@ -218,7 +261,17 @@ export function SolveSheet({ solve, reference, run, suiteCase, backTo }: SolveSh
               at <span className="num">{formatCommit(run.build.commit)}</span>
             </>
           )}
-          , prepared so that it runs.
+          , prepared so that it runs.{' '}
+          {!props.isBuiltInSuite && (
+            <>
+              {run.suite.slug}.yaml is the text of{' '}
+              <Link to={paths.suite(run.suite.slug, run.suite.revision)}>
+                revision {run.suite.revision} of the suite
+              </Link>
+              .{' '}
+            </>
+          )}
+          Both lines are typed in the folder of Tallyroot; the second prints the path.
         </p>
       </Entry>
     </Page>

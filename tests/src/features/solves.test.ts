@@ -1,9 +1,12 @@
 import { describe, expect, it } from 'vitest';
+import { defaultAllowances } from '../../../shared/schemas/allowances.ts';
 import { numberToText } from '../../../shared/schemas/path.ts';
 import type { SolveDetail } from '../../../shared/schemas/runs.ts';
 import { plainText } from '../../../src/components/ui/rich-text.tsx';
 import { firstDifferenceNote } from '../../../src/features/solves/difference-words.ts';
 import { formatBits, splitDiffering } from '../../../src/features/solves/differing-digits.ts';
+import { closeRange, functionSteps } from '../../../src/features/solves/function-steps.ts';
+import { homeLines } from '../../../src/features/solves/home-lines.ts';
 import { firstDifferingRow, pathRows } from '../../../src/features/solves/path-rows.ts';
 import { findingRows } from '../../../src/features/solves/query-findings.ts';
 import { pairOfSolves, pairSentence } from '../../../src/features/solves/solve-pair.ts';
@@ -131,9 +134,92 @@ describe('splitDiffering', () => {
   });
 });
 
+const judging = { allowances: { base: defaultAllowances, solvers: {}, traits: {} }, isExact: true };
+
+describe('a pair of solves', () => {
+  it('is judged by what the library allows its solver', () => {
+    const poorer: SolveDetail = {
+      ...lost,
+      evaluations: kept.evaluations,
+      digits: (kept.digits ?? 0) - 0.3,
+      exact: false,
+      error: 1e-9,
+    };
+    const changeOf = (digits: number) =>
+      pairOfSolves(kept, poorer, suiteCase, {
+        ...judging,
+        allowances: { ...judging.allowances, solvers: { secant: { digits } } },
+      }).change;
+    expect(changeOf(0.1)).toBe('less accurate');
+    expect(changeOf(0.5)).not.toBe('less accurate');
+  });
+
+  it('has not drifted where the arithmetic was another', () => {
+    const other: SolveDetail = { ...kept, pathHash: 'another path' };
+    const changeOf = (isExact: boolean) =>
+      pairOfSolves(kept, other, suiteCase, { ...judging, isExact }).change;
+    expect(changeOf(true)).toBe('drifted');
+    expect(changeOf(false)).toBe('same');
+  });
+});
+
+describe('walking through a function', () => {
+  it('takes every evaluation of f with the derivative asked beside it', () => {
+    const steps = functionSteps(solveSide(lost, suiteCase).lines);
+    expect(steps.length).toBe(lost.evaluations);
+    expect(steps.some((step) => step.again !== null)).toBe(true);
+    expect(steps.every((step) => step.slope === null)).toBe(true);
+  });
+
+  it('looks close at a step, the two before it and the root, but never closer than can be read', () => {
+    const steps = functionSteps(solveSide(kept, suiteCase).lines);
+    const root = Math.sqrt(3);
+    const first = closeRange(steps, 0, root);
+    const last = closeRange(steps, steps.length - 1, root);
+    if (first === null || last === null) throw new Error('there is a range');
+    expect(first.low).toBeLessThan(Math.min(steps[0]?.x ?? 0, root));
+    expect(last.high - last.low).toBeLessThan((first.high - first.low) / 100);
+    expect(last.high - last.low).toBeGreaterThan(1e-6);
+    expect(closeRange([], 0, null)).toBeNull();
+  });
+});
+
+describe('the commands for home', () => {
+  const solve = {
+    solver: 'secant',
+    case: 'orbit',
+    start: null,
+    suite: 'hard-dozen',
+    isBuiltIn: true,
+    isFresh: false,
+  };
+
+  it('measure one solve into a file and print its path from it', () => {
+    expect(homeLines(solve)).toEqual([
+      'npm run tallyroot -- measure --build DIR --suite hard-dozen --solver secant --case orbit --json one.json',
+      'npm run tallyroot -- trace one.json --solver secant --case orbit',
+    ]);
+  });
+
+  it('name the start, a new process and the file of a suite of one’s own, and quote what a shell would read', () => {
+    const [measure, trace] = homeLines({
+      ...solve,
+      case: "kepler e=0.9 'far'",
+      start: 3,
+      suite: 'mine',
+      isBuiltIn: false,
+      isFresh: true,
+    });
+    expect(measure).toContain(
+      "--suite mine.yaml --solver secant --case 'kepler e=0.9 '\\''far'\\''' --fresh --json",
+    );
+    expect(trace).toMatch(/ --start 3$/);
+  });
+});
+
 describe('words of a solve', () => {
   it('name the lost stored value in the sentence of the pair', () => {
-    const pair = pairOfSolves(kept, lost, suiteCase);
+    const pair = pairOfSolves(kept, lost, suiteCase, judging);
     expect(pair.change).toBe('costlier');
     expect(plainText(pairSentence(pair, lost))).toBe(
       `secant on sqrt-three. The same root for ${lost.evaluations} evaluations instead of ${kept.evaluations}: it asks for f again at an x it already has, ${lost.queryCheck.repeated} times.`,
