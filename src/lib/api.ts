@@ -93,6 +93,16 @@ export async function apiSend<Schema extends z.ZodType>(
   return parse(schema, await send(path, { method, headers, body: JSON.stringify(body) }));
 }
 
+/** Sends a body where nothing comes back. */
+export async function apiDo(
+  method: 'POST' | 'PUT' | 'PATCH' | 'DELETE',
+  path: string,
+  body: unknown = {},
+): Promise<void> {
+  const headers = { accept: 'application/json', 'content-type': 'application/json' };
+  await send(path, { method, headers, body: JSON.stringify(body) });
+}
+
 /** Reads every page of a list, in order. For lists that a page shows whole. */
 export async function apiGetAll<Item>(
   page: z.ZodType<{ items: Item[]; next: string | null }>,
