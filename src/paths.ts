@@ -1,11 +1,30 @@
 /** Every address of the client, once. Views keep their filters in the query string, built by the pages. */
 const part = encodeURIComponent;
 
+/** The pages of a library's settings and of the site; without a name comes the first. */
+export type SettingsPage = 'members' | 'tokens' | 'allowances' | 'log';
+export type SitePage = 'lanes' | 'mail' | 'log';
+
 export const paths = {
   home: () => '/',
+  overview: () => '/',
+  signIn: (back?: string) =>
+    back === undefined || back === '/' ? '/sign-in' : `/sign-in?back=${part(back)}`,
+  signUp: () => '/sign-up',
+  forgotten: () => '/forgotten-password',
+  resetPassword: () => '/reset-password',
+  confirmAddress: () => '/confirm-address',
+  invitation: () => '/invitation',
+  setUp: () => '/set-up',
+  account: () => '/account',
+  site: () => '/site',
+  sitePage: (page: SitePage) => `/site/${page}`,
   search: (text: string) => `/search?q=${part(text)}`,
   libraries: () => '/libraries',
+  newLibrary: () => '/new-library',
   library: (slug: string) => `/libraries/${part(slug)}`,
+  librarySettings: (slug: string, page?: SettingsPage) =>
+    `/libraries/${part(slug)}/settings${page === undefined ? '' : `/${page}`}`,
   registerBuild: (slug: string, source?: string) =>
     `/libraries/${part(slug)}/register${source === undefined ? '' : `?source=${part(source)}`}`,
   build: (id: number) => `/builds/${id}`,

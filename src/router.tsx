@@ -1,11 +1,31 @@
-import { createBrowserRouter, Navigate, type RouteObject } from 'react-router';
-import { paths } from './paths.ts';
+import { createBrowserRouter, type RouteObject } from 'react-router';
 import { FaultPage } from './routes/fault-page.tsx';
 import { ShellRoute } from './routes/shell-route.tsx';
 
 /** Pages are read when they are first opened; only the shell is in the first script. */
 const pages: RouteObject[] = [
-  { index: true, element: <Navigate to={paths.libraries()} replace /> },
+  {
+    index: true,
+    lazy: async () => ({ Component: (await import('./routes/overview/overview-page.tsx')).OverviewPage }),
+  },
+  {
+    path: 'new-library',
+    lazy: async () => ({
+      Component: (await import('./routes/settings/new-library-page.tsx')).NewLibraryPage,
+    }),
+  },
+  {
+    path: 'libraries/:library/settings/:page?',
+    lazy: async () => ({ Component: (await import('./routes/settings/settings-page.tsx')).SettingsPage }),
+  },
+  {
+    path: 'site/:page?',
+    lazy: async () => ({ Component: (await import('./routes/admin/site-page.tsx')).SitePage }),
+  },
+  {
+    path: 'account',
+    lazy: async () => ({ Component: (await import('./routes/account/account-page.tsx')).AccountPage }),
+  },
   {
     path: 'libraries',
     lazy: async () => ({ Component: (await import('./routes/libraries-page.tsx')).LibrariesPage }),
@@ -62,6 +82,38 @@ const pages: RouteObject[] = [
   },
 ];
 
+/** For those who are not signed in: outside the frame. */
+const doors: RouteObject[] = [
+  {
+    path: '/sign-in',
+    lazy: async () => ({ Component: (await import('./routes/sign-in/sign-in-page.tsx')).SignInPage }),
+  },
+  {
+    path: '/sign-up',
+    lazy: async () => ({ Component: (await import('./routes/sign-in/sign-up-page.tsx')).SignUpPage }),
+  },
+  {
+    path: '/forgotten-password',
+    lazy: async () => ({ Component: (await import('./routes/sign-in/forgotten-page.tsx')).ForgottenPage }),
+  },
+  {
+    path: '/reset-password',
+    lazy: async () => ({ Component: (await import('./routes/sign-in/reset-page.tsx')).ResetPage }),
+  },
+  {
+    path: '/confirm-address',
+    lazy: async () => ({ Component: (await import('./routes/sign-in/confirm-page.tsx')).ConfirmPage }),
+  },
+  {
+    path: '/invitation',
+    lazy: async () => ({ Component: (await import('./routes/sign-in/invitation-page.tsx')).InvitationPage }),
+  },
+  {
+    path: '/set-up',
+    lazy: async () => ({ Component: (await import('./routes/sign-in/set-up-page.tsx')).SetUpPage }),
+  },
+];
+
 if (import.meta.env.DEV) {
   pages.push({
     path: 'specimen',
@@ -70,12 +122,14 @@ if (import.meta.env.DEV) {
 }
 
 export function createRouter() {
+  const hydrateFallbackElement = <div className="sheet" />;
   return createBrowserRouter([
+    ...doors.map((door) => ({ ...door, errorElement: <FaultPage />, hydrateFallbackElement })),
     {
       path: '/',
       element: <ShellRoute />,
       errorElement: <FaultPage />,
-      hydrateFallbackElement: <div className="sheet" />,
+      hydrateFallbackElement,
       children: pages,
     },
   ]);

@@ -4,6 +4,7 @@ import { type ServerEvent, serverEvent } from '../../shared/schemas/events.ts';
 import { buildKeys } from '../features/builds/builds.queries.ts';
 import { libraryKeys } from '../features/libraries/libraries.queries.ts';
 import { runKeys } from '../features/runs/runs.queries.ts';
+import { sessionKeys } from '../features/session/session.queries.ts';
 import { suiteKeys } from '../features/suites/suites.queries.ts';
 
 const again = (client: QueryClient, queryKey: readonly unknown[]): void => {
@@ -24,7 +25,9 @@ function handle(client: QueryClient, event: ServerEvent): void {
       again(client, libraryKeys.one(event.library));
       return;
     case 'library':
+      // Somebody who makes a library has a role in it.
       again(client, libraryKeys.all);
+      again(client, sessionKeys.me);
       return;
     default:
       again(client, libraryKeys.one(event.library));
@@ -39,6 +42,10 @@ export function useServerEvents(): void {
     source.onmessage = (message: MessageEvent<string>) => {
       const parsed = serverEvent.safeParse(JSON.parse(message.data));
       if (parsed.success) handle(client, parsed.data);
+    };
+    // A stream that is not to be opened again has been refused: perhaps nobody is signed in any more.
+    source.onerror = () => {
+      if (source.readyState === EventSource.CLOSED) again(client, sessionKeys.me);
     };
     return () => source.close();
   }, [client]);

@@ -1,16 +1,12 @@
-import { Fragment, type ReactNode, useEffect, useState } from 'react';
+import { type ReactNode, useEffect, useState } from 'react';
 import { Link } from 'react-router';
 import { useKeys } from '../../lib/use-keys.ts';
-import { Kbd } from '../ui/kbd.tsx';
+import { KeyList, type PageKey } from './key-list.tsx';
+import { KeysDialog } from './keys-dialog.tsx';
 
 export interface TrailStep {
   label: string;
   to?: string;
-}
-
-export interface PageKey {
-  keys: readonly string[];
-  does: string;
 }
 
 export interface PageProps {
@@ -23,37 +19,13 @@ export interface PageProps {
 export const careSentence =
   'Results say how a build behaved on the listed equations on one machine. They are no proof of correctness and no licence to use a solver where people can be hurt; there, the codes and the licensed practice of the place decide.';
 
-const everywhere: readonly PageKey[] = [
-  { keys: ['/'], does: 'search' },
-  { keys: ['?'], does: 'all keys' },
-];
-
-function KeyList({ keys }: { keys: readonly PageKey[] }) {
-  return (
-    <ul className="no-print flex flex-wrap gap-x-5 gap-y-1" aria-label="Keys">
-      {keys.map((entry) => (
-        <li key={entry.does}>
-          {entry.keys.map((key) => (
-            <Fragment key={key}>
-              <span className="sr-only">{key} </span>
-              <Kbd>{key}</Kbd>{' '}
-            </Fragment>
-          ))}
-          {entry.does}
-        </li>
-      ))}
-    </ul>
-  );
-}
-
 /** Trail, entries, and at the foot the keys of this page and the sentence of care. */
 export function Page({ title, trail, keys = [], children }: PageProps) {
   const [isShowingAll, setIsShowingAll] = useState(false);
   useEffect(() => {
     document.title = `${title} · Tallyroot`;
   }, [title]);
-  useKeys({ '?': () => setIsShowingAll((isShowing) => !isShowing) });
-  const shown = isShowingAll ? [...keys, ...everywhere] : [...keys, { keys: ['?'], does: 'all keys' }];
+  useKeys({ '?': () => setIsShowingAll(true) });
   return (
     <>
       <div className="ledger ledger-end border-b border-rule py-[7px] text-[12.5px] leading-[18px] text-ink-3">
@@ -81,7 +53,8 @@ export function Page({ title, trail, keys = [], children }: PageProps) {
       <footer className="ledger mt-8.5 border-t border-rule pt-2.5 text-[12.5px] leading-[18px] text-ink-3">
         <span className="max-wide:hidden" />
         <div>
-          <KeyList keys={shown} />
+          <KeyList keys={[...keys, { keys: ['?'], does: 'all keys' }]} />
+          {isShowingAll && <KeysDialog keys={keys} onClose={() => setIsShowingAll(false)} />}
           <p className="mt-2 max-w-[78em]">{careSentence}</p>
         </div>
       </footer>
