@@ -4,6 +4,7 @@ import type { LibraryView } from '../../shared/schemas/libraries.ts';
 import { Entry } from '../components/sheet/entry.tsx';
 import { Page } from '../components/sheet/page.tsx';
 import { VerdictBlock } from '../components/sheet/verdict-block.tsx';
+import { ButtonLink } from '../components/ui/button.tsx';
 import { QueryState } from '../components/ui/query-state.tsx';
 import { StateNote } from '../components/ui/state-note.tsx';
 import { librariesQuery } from '../features/libraries/libraries.queries.ts';
@@ -62,7 +63,12 @@ export function LibrariesPage() {
       ]}
     >
       {query.data !== undefined && (
-        <VerdictBlock sign="Libraries" colour="text-ink" sentence={sentence(query.data)} />
+        <VerdictBlock
+          sign="Libraries"
+          colour="text-ink"
+          sentence={sentence(query.data)}
+          actions={query.data.length > 0 && <ButtonLink to={paths.newLibrary()}>Create a library</ButtonLink>}
+        />
       )}
       <RunsInHand />
       <Entry title="Under care" note="A library is a set of solvers that are built and run together.">
@@ -71,9 +77,16 @@ export function LibrariesPage() {
           what="the libraries"
           isEmpty={(list) => list.length === 0}
           empty={
-            <StateNote title="No library yet">
-              Register one at the command line or through the interface for programs; its builds and runs
-              appear here.
+            <StateNote
+              title="No library yet"
+              actions={
+                <ButtonLink to={paths.newLibrary()} isMain>
+                  Create a library
+                </ButtonLink>
+              }
+            >
+              Create one, then register a build of it; its runs appear here. Or ask a maintainer of an
+              existing one for an invitation.
             </StateNote>
           }
         >
@@ -103,7 +116,10 @@ export function LibrariesPage() {
                         {library.name}
                       </Link>
                     </th>
-                    <td>{library.description}</td>
+                    <td>
+                      {library.description}
+                      {library.visibility === 'private' && <span className="text-ink-3"> Private.</span>}
+                    </td>
                     <td className="fig r max-wide:text-left" data-label="solvers">
                       {formatFigure(library.solverCount)}
                     </td>

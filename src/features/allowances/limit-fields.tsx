@@ -16,7 +16,11 @@ export function LimitFields({ whose, texts, otherwise, problemOf, onChange }: Li
   return limits.map(({ name, label, unit, isWhole }) => {
     const problem = problemOf(name);
     return (
-      <td key={name} className="align-top!" data-label={`${label}, ${unit}`}>
+      <td
+        key={name}
+        className="align-top! max-wide:grid max-wide:grid-cols-[13em_auto] max-wide:items-center max-wide:justify-start"
+        data-label={`${label}, ${unit}`}
+      >
         <input
           aria-label={`${label}, ${unit}, ${whose}`}
           aria-invalid={problem !== undefined || undefined}

@@ -10,10 +10,10 @@ export interface AuditFilter {
   to: string;
 }
 
-/** `role: reviewer, before: contributor`, for people to read. */
+/** `role: reviewer, before: contributor`, for people to read: the number of a person says nothing to them. */
 export function detailText(detail: AuditEntryView['detail']): string {
   return Object.entries(detail)
-    .filter(([, value]) => value !== null && value !== '')
+    .filter(([name, value]) => name !== 'person' && value !== null && value !== '')
     .map(([name, value]) => `${name}: ${String(value)}`)
     .join(', ');
 }

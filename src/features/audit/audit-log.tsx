@@ -59,7 +59,7 @@ export function AuditLog({ library }: { library?: string }) {
         </>
       }
     >
-      <div className="flex flex-wrap items-end gap-x-4 gap-y-2 border-t border-rule-strong py-3">
+      <div className="flex flex-wrap items-end gap-x-4 gap-y-2 pb-4">
         <Field
           label="Word"
           type="search"

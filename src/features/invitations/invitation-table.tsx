@@ -51,7 +51,7 @@ export function InvitationTable({
                   {(one.state === 'open' || one.state === 'expired') && (
                     <TextAction
                       disabled={isBusy}
-                      aria-label={`Send the invitation of ${one.email} again`}
+                      aria-label={`Send again, to ${one.email}`}
                       onClick={() => resend.mutate(one.id)}
                     >
                       Send again

@@ -35,7 +35,7 @@ export function MailSection() {
         </>
       }
     >
-      <div className="flex flex-wrap gap-x-3.5 border-t border-rule-strong py-2">
+      <div className="flex flex-wrap gap-x-3.5 pb-3">
         {mailStates.map((one) => (
           <FilterWord
             key={one}

@@ -27,7 +27,7 @@ export function PeopleSection() {
         </>
       }
     >
-      <div className="border-t border-rule-strong py-3">
+      <div className="pb-4">
         <Field
           label="Name or address"
           type="search"

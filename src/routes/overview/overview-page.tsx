@@ -134,7 +134,11 @@ export function OverviewPage() {
   const notWithin = judged.filter(
     ({ comparison }) => comparison !== undefined && comparison.verdict !== 'within allowances',
   );
-  const beyond = notWithin.filter(({ comparison }) => comparison?.verdict === 'beyond allowances').length;
+  const beyond = notWithin.flatMap(({ build, comparison }) =>
+    comparison?.verdict === 'beyond allowances'
+      ? [{ what: build.subject ?? build.label, broke: comparison.changes.broke ?? 0 }]
+      : [],
+  );
   const within = judged.filter(({ comparison }) => comparison?.verdict === 'within allowances').length;
   const isEmpty = !isReading && libraries.length === 0;
   return (

@@ -21,15 +21,12 @@ function Row({ judged }: { judged: JudgedBuild }) {
         <VerdictWord verdict={verdict} isShort />
       </td>
       <th scope="row" className="lead-cell">
-        <Link to={paths.comparison(run.id, writeBase(base))} data-row-link>
+        <Link to={paths.comparison(run.id, writeBase(base))} data-row-link className="inline-block py-[3px]">
           {build.subject ?? build.label}
         </Link>
         <span className="block text-note font-normal text-ink-3">
-          <Link to={paths.library(library.slug)}>{library.name}</Link>, build{' '}
-          <Link to={paths.build(build.id)} className="num">
-            {formatCommit(build.commit ?? build.label)}
-          </Link>
-          , {formatShortDate(build.createdAt)}, {build.createdBy}
+          {library.name}, build <span className="num">{formatCommit(build.commit ?? build.label)}</span>,{' '}
+          {formatShortDate(build.createdAt)}, {build.createdBy}
         </span>
       </th>
       <td>

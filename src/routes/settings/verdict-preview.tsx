@@ -27,10 +27,10 @@ function Row({ pair, now, proposed }: RowProps) {
           build <span className="num">{pair.commit}</span>
         </span>
       </th>
-      <td data-label="now">
+      <td data-label="now" className="max-wide:flex max-wide:items-center max-wide:gap-2">
         <VerdictWord verdict={judged.now.verdict} isShort />
       </td>
-      <td data-label="then">
+      <td data-label="then" className="max-wide:flex max-wide:items-center max-wide:gap-2">
         <VerdictWord verdict={judged.proposed.verdict} isShort />
         {isOther && <span className="ml-2 text-ink-3">another one</span>}
       </td>

@@ -20,6 +20,13 @@ function whatTheyDo({ isAdmin, role }: DemoPersonView): { term: string; text: st
     : { term: 'nobody in particular', text: 'reads what is public' };
 }
 
+const order = ['maintainer', 'reviewer', 'contributor'];
+
+function byRole(a: DemoPersonView, b: DemoPersonView): number {
+  const placeOf = ({ role }: DemoPersonView): number => (role === null ? order.length : order.indexOf(role));
+  return placeOf(a) - placeOf(b) || a.name.localeCompare(b.name);
+}
+
 /** The demo's invented people, one button each: no password, and nothing to make up. */
 export function DemoPeople({ onEntered }: { onEntered: () => void }) {
   const query = useQuery(demoPeopleQuery);
@@ -36,7 +43,7 @@ export function DemoPeople({ onEntered }: { onEntered: () => void }) {
       {(people) => (
         <>
           <ul className="border-t border-rule-strong">
-            {people.map((person) => {
+            {people.toSorted(byRole).map((person) => {
               const { term, text } = whatTheyDo(person);
               return (
                 <li
@@ -49,10 +56,12 @@ export function DemoPeople({ onEntered }: { onEntered: () => void }) {
                   </span>
                   <Button
                     disabled={signIn.isPending}
-                    aria-label={`Sign in as ${person.name}, ${term}`}
                     onClick={() => signIn.mutate(person.id, { onSuccess: onEntered })}
                   >
                     Enter
+                    <span className="sr-only">
+                      as {person.name}, {term}
+                    </span>
                   </Button>
                 </li>
               );

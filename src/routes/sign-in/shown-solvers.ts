@@ -8,6 +8,7 @@ const illinois: SmallSolver = (ask, low = 0, high = 1) => {
   let stayed = 0;
   for (let step = 0; step < 100; step += 1) {
     const c = b - fb * ((b - a) / (fb - fa));
+    if (c === a || c === b) return c;
     const fc = ask.f(c);
     if (fc === 0 || Math.abs(b - a) <= 1e-15 * Math.abs(c)) return c;
     if (fc < 0 === fb < 0) {
