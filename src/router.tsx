@@ -35,6 +35,10 @@ const pages: RouteObject[] = [
     lazy: async () => ({ Component: (await import('./routes/library/library-page.tsx')).LibraryPage }),
   },
   {
+    path: 'libraries/:library/register',
+    lazy: async () => ({ Component: (await import('./routes/register/register-page.tsx')).RegisterPage }),
+  },
+  {
     path: 'builds/:build',
     lazy: async () => ({ Component: (await import('./routes/build-page.tsx')).BuildPage }),
   },

@@ -1,6 +1,6 @@
-import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query';
-import { buildPage, buildView, type RegisterBuildBody } from '../../../shared/schemas/builds.ts';
-import { apiGet, apiGetAll, apiSend } from '../../lib/api.ts';
+import { queryOptions } from '@tanstack/react-query';
+import { buildPage, buildView } from '../../../shared/schemas/builds.ts';
+import { apiGet, apiGetAll } from '../../lib/api.ts';
 
 export const buildKeys = {
   all: ['builds'] as const,
@@ -20,12 +20,3 @@ export const buildQuery = (id: number) =>
     queryKey: [...buildKeys.all, id],
     queryFn: ({ signal }) => apiGet(buildView, `/builds/${id}`, signal),
   });
-
-export function useRegisterBuild(library: string) {
-  const client = useQueryClient();
-  return useMutation({
-    mutationFn: (body: RegisterBuildBody) =>
-      apiSend('POST', buildView, `/libraries/${encodeURIComponent(library)}/builds`, body),
-    onSuccess: () => client.invalidateQueries({ queryKey: buildKeys.all }),
-  });
-}

@@ -1,16 +1,19 @@
 import type { ReactNode } from 'react';
-import type { BuildView } from '../../../shared/schemas/builds.ts';
+import type { Recipe } from '../../../shared/schemas/builds.ts';
 
 export interface RecipeListProps {
-  build: BuildView;
+  recipe: Recipe;
+  /** Where it runs; null where that is not decided yet. */
+  folder: string | null;
 }
 
 /** What the manifest says about running the build. */
-export function RecipeList({ build }: RecipeListProps) {
-  const { recipe } = build;
+export function RecipeList({ recipe, folder }: RecipeListProps) {
   const environment = Object.entries(recipe.environment);
   const rows: { term: string; body: ReactNode }[] = [
-    { term: 'folder', body: <code className="wrap-anywhere text-figure">{build.folder}</code> },
+    ...(folder === null
+      ? []
+      : [{ term: 'folder', body: <code className="wrap-anywhere text-figure">{folder}</code> }]),
     { term: 'adapter', body: <code className="wrap-anywhere text-figure">{recipe.adapter}</code> },
     {
       term: 'prepared by',

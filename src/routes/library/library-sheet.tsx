@@ -1,5 +1,4 @@
 import { useQuery } from '@tanstack/react-query';
-import { useState } from 'react';
 import { useNavigate } from 'react-router';
 import { gravity } from '../../../shared/comparison/change.ts';
 import type { AllowanceRevisionView } from '../../../shared/schemas/allowance-revisions.ts';
@@ -11,12 +10,11 @@ import { VerdictSign, verdictColour } from '../../components/marks/verdict-sign.
 import { Entry } from '../../components/sheet/entry.tsx';
 import { Page } from '../../components/sheet/page.tsx';
 import { VerdictBlock } from '../../components/sheet/verdict-block.tsx';
-import { Button } from '../../components/ui/button.tsx';
+import { Button, ButtonLink } from '../../components/ui/button.tsx';
 import { FilterWord } from '../../components/ui/filter-word.tsx';
 import { RichText } from '../../components/ui/rich-text.tsx';
 import { StateNote } from '../../components/ui/state-note.tsx';
 import { BuildsTable } from '../../features/builds/builds-table.tsx';
-import { RegisterForm } from '../../features/builds/register-form.tsx';
 import { comparisonQuery } from '../../features/comparisons/comparisons.queries.ts';
 import { allowanceLines, exceptionLines } from '../../lib/allowance-words.ts';
 import { formatCommit, formatDate } from '../../lib/format.ts';
@@ -48,7 +46,6 @@ function focusedBuild(): number | null {
 export function LibrarySheet({ library, builds, runs, solvers, allowances }: LibrarySheetProps) {
   const view = useViewState();
   const navigate = useNavigate();
-  const [isRegistering, setIsRegistering] = useState(false);
   const suites = suitesByUse(runs);
   const suite = view.get('suite') || suites[0] || '';
   const runOf = newestRuns(runs, suite);
@@ -94,7 +91,7 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
       if (id !== null) toggle(id);
     },
     m: compare,
-    r: () => setIsRegistering(true),
+    r: () => void navigate(paths.registerBuild(library.slug)),
   });
   const lines = [...allowanceLines(allowances.allowances.base), ...exceptionLines(allowances.allowances)];
   const stand = comparison.data;
@@ -162,9 +159,9 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
         }
         actions={
           <>
-            <Button isMain={builds.length === 0} hotkey="r" onClick={() => setIsRegistering(true)}>
+            <ButtonLink isMain={builds.length === 0} hotkey="r" to={paths.registerBuild(library.slug)}>
               Register a build
-            </Button>
+            </ButtonLink>
             {builds.length > 1 && (
               <>
                 <Button isMain={canCompare} hotkey="m" disabled={!canCompare} onClick={compare}>
@@ -182,13 +179,6 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
           </>
         }
       >
-        {isRegistering && (
-          <RegisterForm
-            library={library.slug}
-            onDone={(build) => void navigate(paths.build(build.id))}
-            onClose={() => setIsRegistering(false)}
-          />
-        )}
         {suites.length > 1 && (
           <div className="no-print mt-3 flex flex-wrap items-center gap-x-3.5">
             <span className="text-note text-ink-3">suite</span>
@@ -207,7 +197,7 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
       <Entry title="Builds" note="Newest first. Choose two to compare them.">
         {builds.length === 0 ? (
           <StateNote title="No build yet">
-            Register a folder of this machine that holds a prepared checkout. Tallyroot reads its{' '}
+            Register one from a repository, an archive or a folder of this machine. Tallyroot reads its{' '}
             <code>tallyroot.yaml</code> and shows what it will run before it runs.
           </StateNote>
         ) : (
