@@ -21,9 +21,7 @@ export function CommandList({ commands, isReading, onChoose, onClose }: CommandL
   const found = rankCommands(commands, typed).slice(0, mostShown);
   const chosen = Math.min(at, found.length - 1);
   useEffect(() => {
-    const element = dialog.current;
-    element?.showModal();
-    return () => element?.close();
+    if (dialog.current?.open === false) dialog.current.showModal();
   }, []);
   useEffect(() => {
     list.current?.children[chosen]?.scrollIntoView({ block: 'nearest' });
@@ -83,7 +81,7 @@ export function CommandList({ commands, isReading, onChoose, onClose }: CommandL
             ? 'Reading what there is …'
             : found.length === 0
               ? 'Nothing has that in its name.'
-              : `${found.length === mostShown ? `The first ${mostShown}` : found.length}; arrows choose, enter opens, escape leaves.`}
+              : `${found.length === mostShown ? `The first ${mostShown}` : `${found.length} found`}; arrows choose, enter opens, escape leaves.`}
         </p>
       </div>
       <div

@@ -20,9 +20,7 @@ const everywhere: readonly PageKey[] = [
 export function KeysDialog({ keys, onClose }: KeysDialogProps) {
   const dialog = useRef<HTMLDialogElement>(null);
   useEffect(() => {
-    const element = dialog.current;
-    element?.showModal();
-    return () => element?.close();
+    if (dialog.current?.open === false) dialog.current.showModal();
   }, []);
   return (
     <dialog

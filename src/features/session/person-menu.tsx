@@ -4,7 +4,7 @@ import { SchemeSwitch } from '../../components/sheet/scheme-switch.tsx';
 import { TextAction } from '../../components/ui/text-action.tsx';
 import { paths } from '../../paths.ts';
 import type { Person } from './asker.ts';
-import { useSignOut } from './session.queries.ts';
+import { leaveByTheDoor, useSignOut } from './session.queries.ts';
 
 export interface PersonMenuProps {
   person: Person;
@@ -16,7 +16,7 @@ export function PersonMenu({ person }: PersonMenuProps) {
   const place = useRef<HTMLDivElement>(null);
   const button = useRef<HTMLButtonElement>(null);
   const id = useId();
-  const signOut = useSignOut();
+  const signOut = useSignOut(leaveByTheDoor);
   // Open on the page that it was opened on: going to another one closes it.
   const { key } = useLocation();
   const isOpen = openAt === key;

@@ -10,6 +10,7 @@ import {
 } from '../../../shared/schemas/people.ts';
 import { aboutView } from '../../../shared/schemas/site.ts';
 import { apiDo, apiGet, apiSend } from '../../lib/api.ts';
+import { paths } from '../../paths.ts';
 
 export const sessionKeys = { all: ['session'] as const, me: ['session', 'me'] as const };
 
@@ -79,12 +80,17 @@ export const useSetUp = () =>
 export const useSignUp = () =>
   useEntering((body: SignUpBody) => apiSend('POST', entered, '/auth/sign-up/email', body));
 
-export function useSignOut() {
+export function useSignOut(afterwards: (client: QueryClient) => void = forgetPerson) {
   const client = useQueryClient();
   return useMutation({
     mutationFn: () => apiDo('POST', '/auth/sign-out'),
-    onSuccess: () => forgetPerson(client),
+    onSuccess: () => afterwards(client),
   });
+}
+
+/** Leaves by loading the door anew: nothing that was read stays in the browser, and whoever comes next starts afresh. */
+export function leaveByTheDoor(): void {
+  window.location.assign(paths.signIn());
 }
 
 /** Reads again who is signed in: a role or a name may be another one. */

@@ -1,4 +1,4 @@
-import { useQuery, useQueryClient } from '@tanstack/react-query';
+import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Ask } from '../../components/ui/ask.tsx';
 import { Button } from '../../components/ui/button.tsx';
@@ -6,14 +6,13 @@ import { FormAlert } from '../../components/ui/form-alert.tsx';
 import { QueryState } from '../../components/ui/query-state.tsx';
 import { TextAction } from '../../components/ui/text-action.tsx';
 import { placesQuery, useEndSession, useSignOutEverywhere } from '../../features/people/people.queries.ts';
-import { forgetPerson } from '../../features/session/session.queries.ts';
+import { leaveByTheDoor } from '../../features/session/session.queries.ts';
 import { browserWords } from '../../lib/browser-words.ts';
 import { sentenceOf } from '../../lib/check-form.ts';
 import { formatDateTime, formatShortDate } from '../../lib/format.ts';
 
 /** Where one is signed in, and how to end it. */
 export function Places() {
-  const client = useQueryClient();
   const query = useQuery(placesQuery);
   const end = useEndSession();
   const endAll = useSignOutEverywhere();
@@ -70,7 +69,7 @@ export function Places() {
                 word="Sign out everywhere"
                 isBusy={endAll.isPending}
                 problem={sentenceOf(endAll.error)}
-                onYes={() => endAll.mutate(undefined, { onSuccess: () => forgetPerson(client) })}
+                onYes={() => endAll.mutate(undefined, { onSuccess: leaveByTheDoor })}
                 onNo={() => setIsAsked(false)}
               />
             ) : (

@@ -11,24 +11,25 @@ import { type SitePage as PageName, paths } from '../../paths.ts';
 import { LanesSection } from './lanes-section.tsx';
 import { MailSection } from './mail-section.tsx';
 import { PeopleSection } from './people-section.tsx';
+import { LanesSentence, MailSentence, PeopleSentence } from './site-sentences.tsx';
 
 interface Section {
   page: PageName | undefined;
   label: string;
-  sentence: string;
+  Sentence: () => ReactNode;
   render: () => ReactNode;
 }
 
 const sections: readonly Section[] = [
-  { page: undefined, label: 'People', sentence: 'Who has an account.', render: () => <PeopleSection /> },
+  { page: undefined, label: 'People', Sentence: PeopleSentence, render: () => <PeopleSection /> },
   {
     page: 'lanes',
     label: 'Lanes',
-    sentence: 'What is being measured, and with what.',
+    Sentence: LanesSentence,
     render: () => <LanesSection />,
   },
-  { page: 'mail', label: 'Mail', sentence: 'What was sent, and what waits.', render: () => <MailSection /> },
-  { page: 'log', label: 'Audit log', sentence: 'Who did what.', render: () => <AuditLog /> },
+  { page: 'mail', label: 'Mail', Sentence: MailSentence, render: () => <MailSection /> },
+  { page: 'log', label: 'Audit log', Sentence: () => 'Who did what.', render: () => <AuditLog /> },
 ];
 
 /** For those who look after the site. */
@@ -47,7 +48,7 @@ export function SitePage() {
     >
       {may('site.people') ? (
         <>
-          <VerdictBlock sign="Site" colour="text-ink" sentence={section.sentence}>
+          <VerdictBlock sign="Site" colour="text-ink" sentence={<section.Sentence />}>
             <SubNav
               label="Site"
               words={sections.map((one) => ({

@@ -17,13 +17,20 @@ import { type SettingsPage as PageName, paths } from '../../paths.ts';
 import { AllowancesSection } from './allowances-section.tsx';
 import { GeneralSection } from './general-section.tsx';
 import { MembersSection } from './members-section.tsx';
+import {
+  AllowancesSentence,
+  LibrarySentence,
+  MembersSentence,
+  type SentenceProps,
+  TokensSentence,
+} from './section-sentences.tsx';
 import { TokensSection } from './tokens-section.tsx';
 
 interface Section {
   page: PageName | undefined;
   label: string;
   needs: Action;
-  sentence: string;
+  Sentence: (props: SentenceProps) => ReactNode;
   /** Who could, where one may not. */
   otherwise: string;
   render: (library: LibraryView) => ReactNode;
@@ -34,7 +41,7 @@ const sections: readonly Section[] = [
     page: undefined,
     label: 'Library',
     needs: 'library.read',
-    sentence: 'What it is, and who sees it.',
+    Sentence: LibrarySentence,
     otherwise: '',
     render: (library) => <GeneralSection key={library.slug} library={library} />,
   },
@@ -42,7 +49,7 @@ const sections: readonly Section[] = [
     page: 'members',
     label: 'Members',
     needs: 'members.read',
-    sentence: 'Who works on it, and what each may do.',
+    Sentence: MembersSentence,
     otherwise: 'Its members see who they are.',
     render: (library) => <MembersSection library={library} />,
   },
@@ -50,7 +57,7 @@ const sections: readonly Section[] = [
     page: 'tokens',
     label: 'Bot tokens',
     needs: 'tokens.edit',
-    sentence: 'Which programs work for it.',
+    Sentence: TokensSentence,
     otherwise: 'Its maintainers make and revoke tokens.',
     render: (library) => <TokensSection library={library} />,
   },
@@ -58,7 +65,7 @@ const sections: readonly Section[] = [
     page: 'allowances',
     label: 'Allowances',
     needs: 'library.read',
-    sentence: 'What the team tolerates.',
+    Sentence: AllowancesSentence,
     otherwise: '',
     render: (library) => <AllowancesSection library={library} />,
   },
@@ -66,7 +73,7 @@ const sections: readonly Section[] = [
     page: 'log',
     label: 'Log',
     needs: 'audit.read',
-    sentence: 'Who did what here.',
+    Sentence: () => 'Who did what here.',
     otherwise: 'Its maintainers and the site’s admins read it.',
     render: (library) => <AuditLog library={library.slug} />,
   },
@@ -74,6 +81,7 @@ const sections: readonly Section[] = [
 
 function Sections({ library, section }: { library: LibraryView; section: Section }) {
   const may = useMay();
+  const canSee = may(section.needs, library);
   const role = roleIn(usePerson(), library.slug);
   return (
     <>
@@ -81,7 +89,7 @@ function Sections({ library, section }: { library: LibraryView; section: Section
         sign={library.name}
         colour="text-ink"
         note={<p>{role === null ? 'You are no member of it.' : `You are ${role} here.`}</p>}
-        sentence={section.sentence}
+        sentence={canSee ? <section.Sentence library={library} /> : section.label}
       >
         <SubNav
           label="Settings"
@@ -94,7 +102,7 @@ function Sections({ library, section }: { library: LibraryView; section: Section
             }))}
         />
       </VerdictBlock>
-      {may(section.needs, library) ? (
+      {canSee ? (
         section.render(library)
       ) : (
         <Entry title={section.label}>

@@ -13,11 +13,11 @@ import type { PreviewPair, PreviewPairs } from './use-preview-pairs.ts';
 interface RowProps {
   pair: PreviewPair;
   now: AllowanceSet;
-  proposed: AllowanceSet;
+  proposed: AllowanceSet | null;
 }
 
 function Row({ pair, now, proposed }: RowProps) {
-  const judged = useMemo(() => rejudge(pair, now, proposed), [pair, now, proposed]);
+  const judged = useMemo(() => rejudge(pair, now, proposed ?? now), [pair, now, proposed]);
   const isOther = judged.now.verdict !== judged.proposed.verdict;
   return (
     <tr>
@@ -31,16 +31,19 @@ function Row({ pair, now, proposed }: RowProps) {
         <VerdictWord verdict={judged.now.verdict} isShort />
       </td>
       <td data-label="then" className="max-wide:flex max-wide:items-center max-wide:gap-2">
-        <VerdictWord verdict={judged.proposed.verdict} isShort />
+        {proposed === null ? '–' : <VerdictWord verdict={judged.proposed.verdict} isShort />}
         {isOther && <span className="ml-2 text-ink-3">another one</span>}
       </td>
       <td>
-        {judged.proposed.breaches.map((breach) => (
+        {(proposed === null ? [] : judged.proposed.breaches).map((breach) => (
           <p key={`${breach.allowance} ${breach.scope.solver} ${breach.scope.trait}`} className="text-ink-2">
             {breachTerms[breach.allowance]}: <RichText pieces={breachSentence(breach)} />
           </p>
         ))}
-        {judged.proposed.breaches.length === 0 && <span className="text-ink-3">nothing is beyond them</span>}
+        {proposed === null && <span className="text-ink-3">a field cannot be read</span>}
+        {proposed !== null && judged.proposed.breaches.length === 0 && (
+          <span className="text-ink-3">nothing is beyond them</span>
+        )}
       </td>
     </tr>
   );
@@ -82,7 +85,7 @@ export function VerdictPreview({ preview, now, proposed }: VerdictPreviewProps) 
       </thead>
       <tbody>
         {pairs.map((pair) => (
-          <Row key={pair.candidateRun} pair={pair} now={now} proposed={proposed ?? now} />
+          <Row key={pair.candidateRun} pair={pair} now={now} proposed={proposed} />
         ))}
       </tbody>
     </table>
