@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { useNavigate } from 'react-router';
+import { Link, useNavigate } from 'react-router';
 import { gravity } from '../../../shared/comparison/change.ts';
 import type { AllowanceRevisionView } from '../../../shared/schemas/allowance-revisions.ts';
 import type { BuildView } from '../../../shared/schemas/builds.ts';
@@ -16,6 +16,8 @@ import { RichText } from '../../components/ui/rich-text.tsx';
 import { StateNote } from '../../components/ui/state-note.tsx';
 import { BuildsTable } from '../../features/builds/builds-table.tsx';
 import { comparisonQuery } from '../../features/comparisons/comparisons.queries.ts';
+import { roleIn } from '../../features/session/asker.ts';
+import { useMay, usePerson } from '../../features/session/use-may.ts';
 import { allowanceLines, exceptionLines } from '../../lib/allowance-words.ts';
 import { formatCommit, formatDate } from '../../lib/format.ts';
 import { moveRowFocus } from '../../lib/row-focus.ts';
@@ -46,6 +48,9 @@ function focusedBuild(): number | null {
 export function LibrarySheet({ library, builds, runs, solvers, allowances }: LibrarySheetProps) {
   const view = useViewState();
   const navigate = useNavigate();
+  const may = useMay();
+  const role = roleIn(usePerson(), library.slug);
+  const canRegister = may('build.register', library);
   const suites = suitesByUse(runs);
   const suite = view.get('suite') || suites[0] || '';
   const runOf = newestRuns(runs, suite);
@@ -91,7 +96,7 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
       if (id !== null) toggle(id);
     },
     m: compare,
-    r: () => void navigate(paths.registerBuild(library.slug)),
+    ...(canRegister ? { r: () => void navigate(paths.registerBuild(library.slug)) } : {}),
   });
   const lines = [...allowanceLines(allowances.allowances.base), ...exceptionLines(allowances.allowances)];
   const stand = comparison.data;
@@ -105,7 +110,7 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
         { keys: ['enter'], does: 'open the build' },
         { keys: ['space'], does: 'choose for a comparison' },
         { keys: ['m'], does: 'compare the two chosen' },
-        { keys: ['r'], does: 'register a build' },
+        ...(canRegister ? [{ keys: ['r'], does: 'register a build' }] : []),
       ]}
     >
       <VerdictBlock
@@ -127,6 +132,11 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
               </p>
             )}
             {library.description !== '' && <p>{library.description}</p>}
+            <p>
+              {role === null
+                ? 'You are no member; members register builds and run them.'
+                : `You are ${role} here.`}
+            </p>
           </>
         }
         sentence={
@@ -159,9 +169,11 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
         }
         actions={
           <>
-            <ButtonLink isMain={builds.length === 0} hotkey="r" to={paths.registerBuild(library.slug)}>
-              Register a build
-            </ButtonLink>
+            {canRegister && (
+              <ButtonLink isMain={builds.length === 0} hotkey="r" to={paths.registerBuild(library.slug)}>
+                Register a build
+              </ButtonLink>
+            )}
             {builds.length > 1 && (
               <>
                 <Button isMain={canCompare} hotkey="m" disabled={!canCompare} onClick={compare}>
@@ -176,6 +188,7 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
                 )}
               </>
             )}
+            {may('members.read', library) && <Link to={paths.librarySettings(library.slug)}>Settings</Link>}
           </>
         }
       >
