@@ -27,7 +27,7 @@ export function BuildsTable(props: BuildsTableProps) {
           <th scope="col" className="r">
             solved
           </th>
-          <th scope="col">against the build before</th>
+          <th scope="col">what changed</th>
           <th scope="col">verdict</th>
           <th scope="col">
             <span className="sr-only">choose for a comparison</span>

@@ -11,7 +11,7 @@ export interface LibraryStand {
   /** What the newest build that was run is called. */
   newest: string | null;
   suite: string;
-  /** Against the build before; undefined while it is read, null where there is none. */
+  /** Against what the build was run against; undefined while it is read, null where there is nothing. */
   comparison: ComparisonView | null | undefined;
   solved: number | null;
   of: number | null;
@@ -37,29 +37,24 @@ export function libraryPieces(stand: LibraryStand): TextPiece[] {
           plain(` solved or rightly refused on ${stand.suite}`),
         ];
   const name = strong(stand.newest);
+  const base = comparison?.reference.revision === null ? 'the build before' : 'the reference results';
   if (comparison === undefined || comparison === null)
     return [name, plain(' is the newest build that was run'), ...counts, plain('.')];
   if (comparison.verdict === 'within allowances') {
     const isSame = Object.keys(comparison.changes).every((change) => change === 'same');
     return isSame
-      ? [name, plain(' changed nothing against the build before'), ...counts, plain('.')]
-      : [name, plain(' is within allowances against the build before'), ...counts, plain('.')];
+      ? [name, plain(` changed nothing against ${base}`), ...counts, plain('.')]
+      : [name, plain(` is within allowances against ${base}`), ...counts, plain('.')];
   }
   if (comparison.verdict === 'beyond allowances') {
     return [
       name,
       plain(' is '),
       strong('beyond allowances'),
-      plain(' against the build before'),
+      plain(` against ${base}`),
       ...counts,
       plain('.'),
     ];
   }
-  return [
-    plain('Whether '),
-    name,
-    plain(' is as good as the build before could not be told'),
-    ...counts,
-    plain('.'),
-  ];
+  return [plain('Whether '), name, plain(` is as good as ${base} could not be told`), ...counts, plain('.')];
 }

@@ -4,7 +4,7 @@ import { gravity } from '../../../shared/comparison/change.ts';
 import type { AllowanceRevisionView } from '../../../shared/schemas/allowance-revisions.ts';
 import type { BuildView } from '../../../shared/schemas/builds.ts';
 import type { LibraryView, SolverView } from '../../../shared/schemas/libraries.ts';
-import type { RunView } from '../../../shared/schemas/runs.ts';
+import type { RunBase, RunView } from '../../../shared/schemas/runs.ts';
 import { ChangeWord } from '../../components/marks/change-word.tsx';
 import { VerdictSign, verdictColour } from '../../components/marks/verdict-sign.tsx';
 import { Entry } from '../../components/sheet/entry.tsx';
@@ -64,13 +64,18 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
     });
   const idOf = (build: BuildView | undefined): number | null =>
     build === undefined ? null : (runOf.get(build.id)?.id ?? null);
-  const beforeOf = (build: BuildView): number | null => idOf(withRun[withRun.indexOf(build) + 1]);
+  // A branch ran against the reference; what has no base of its own stands against the build before.
+  const baseOf = (build: BuildView): RunBase | null => {
+    const own = runOf.get(build.id)?.against ?? null;
+    const before = withRun.includes(build) ? idOf(withRun[withRun.indexOf(build) + 1]) : null;
+    return own ?? (before === null ? null : { kind: 'run', run: before });
+  };
   const [newest] = withRun;
   const newestRun = idOf(newest);
-  const newestBefore = newest === undefined ? null : beforeOf(newest);
+  const newestBase = newest === undefined ? null : baseOf(newest);
   const comparison = useQuery({
-    ...comparisonQuery(newestRun ?? 0, { kind: 'run', run: newestBefore ?? 0 }),
-    enabled: newestRun !== null && newestBefore !== null,
+    ...comparisonQuery(newestRun ?? 0, newestBase ?? { kind: 'run', run: 0 }),
+    enabled: newestRun !== null && newestBase !== null,
   });
   const chosen = view
     .list('chosen')
@@ -145,7 +150,7 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
               buildCount: builds.length,
               newest: newest === undefined ? null : formatCommit(newest.commit ?? newest.label),
               suite,
-              comparison: newestBefore === null ? null : stand,
+              comparison: newestBase === null ? null : stand,
               solved: overall?.candidate.solved ?? null,
               of: overall?.candidate.of ?? null,
             })}
@@ -207,7 +212,10 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
         )}
       </VerdictBlock>
       {builds.length > 0 && <SolverTrends shown={shown} solvers={solvers} suite={suite} />}
-      <Entry title="Builds" note="Newest first. Choose two to compare them.">
+      <Entry
+        title="Builds"
+        note="Newest first, each against what it was run against: the reference results, or the build before. Choose two to compare them."
+      >
         {builds.length === 0 ? (
           <StateNote title="No build yet">
             Register one from a repository, an archive or a folder of this machine. Tallyroot reads its{' '}
@@ -222,12 +230,12 @@ export function LibrarySheet({ library, builds, runs, solvers, allowances }: Lib
             renderSolved={(build) => (
               <SolvedCell
                 run={idOf(build)}
-                before={beforeOf(build)}
+                base={baseOf(build)}
                 solved={runOf.get(build.id)?.progress.solved ?? null}
               />
             )}
-            renderChanges={(build) => <ChangesCell run={idOf(build)} before={beforeOf(build)} />}
-            renderVerdict={(build) => <VerdictCell run={idOf(build)} before={beforeOf(build)} />}
+            renderChanges={(build) => <ChangesCell run={idOf(build)} base={baseOf(build)} />}
+            renderVerdict={(build) => <VerdictCell run={idOf(build)} base={baseOf(build)} />}
           />
         )}
       </Entry>
