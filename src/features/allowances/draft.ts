@@ -1,4 +1,9 @@
-import { type AllowanceSet, type Allowances, allowances } from '../../../shared/schemas/allowances.ts';
+import {
+  type AllowanceSet,
+  type Allowances,
+  allowanceException,
+  allowances,
+} from '../../../shared/schemas/allowances.ts';
 
 export type AllowanceName = keyof Allowances;
 
@@ -94,7 +99,7 @@ function readTexts(texts: LimitTexts, at: string, problems: Record<string, strin
     if (read.kind === 'limit') found.push([name, read.limit]);
     if (read.kind === 'wrong') problems[`${at}.${name}`] = read.why;
   }
-  return allowances.partial().parse(Object.fromEntries(found));
+  return allowanceException.parse(Object.fromEntries(found));
 }
 
 /** What the fields say, or what is wrong in which of them. */
