@@ -22,6 +22,7 @@ import { formatCommit, formatCount, formatDateTime } from '../../lib/format.ts';
 import { moveRowFocus } from '../../lib/row-focus.ts';
 import { useKeys } from '../../lib/use-keys.ts';
 import { paths } from '../../paths.ts';
+import { useMayIn } from '../use-may-in.ts';
 
 export interface BuildSheetProps {
   build: BuildView;
@@ -83,6 +84,7 @@ export function BuildSheet({ build }: BuildSheetProps) {
   const navigate = useNavigate();
   const runs = useQuery(runsQuery({ build: build.id }));
   const suites = useQuery(suitesQuery);
+  const may = useMayIn(build.library);
   const log = useBuildLog(build.id);
   const state = log.data?.state ?? build.state;
   const reason = log.data?.reason ?? build.reason;
@@ -131,7 +133,7 @@ export function BuildSheet({ build }: BuildSheetProps) {
         sentence={<RichText pieces={sentence({ ...build, state }, runs.data)} />}
         lead={<Lead label={build.label === name ? null : build.label} reason={reason} />}
         actions={
-          state === 'ready' && suites.data !== undefined && suites.data.length > 0 ? (
+          state === 'ready' && may('run.start') && suites.data !== undefined && suites.data.length > 0 ? (
             <StartRunForm
               build={build.id}
               suites={suites.data}
@@ -154,7 +156,9 @@ export function BuildSheet({ build }: BuildSheetProps) {
           empty={
             <StateNote title="Not run yet">
               {state === 'ready'
-                ? 'Choose a suite above and run it.'
+                ? may('run.start')
+                  ? 'Choose a suite above and run it.'
+                  : 'Members of the library can run it.'
                 : state === 'failed'
                   ? 'It could not be prepared, so it cannot be run.'
                   : 'It can be run once it is prepared.'}

@@ -11,6 +11,7 @@ import { useRunAgain } from '../../features/runs/runs.queries.ts';
 import { formatCommit, formatCount } from '../../lib/format.ts';
 import { useKeys } from '../../lib/use-keys.ts';
 import { paths } from '../../paths.ts';
+import { useMayIn } from '../use-may-in.ts';
 
 export interface ComparisonActionsProps {
   run: RunDetail;
@@ -21,12 +22,16 @@ export interface ComparisonActionsProps {
 export function ComparisonActions({ run, base }: ComparisonActionsProps) {
   const navigate = useNavigate();
   const again = useRunAgain(run.id);
-  const canBeReference = useLacksReference(run);
+  const may = useMayIn(run.library);
+  const canRun = may('run.start');
+  const canBeReference = useLacksReference(run) && may('reference.accept');
   const [open, setOpen] = useState<'again' | 'export' | 'reference' | null>(null);
   const close = (): void => setOpen(null);
   const flip = (which: 'again' | 'export' | 'reference'): void => setOpen(open === which ? null : which);
   useKeys({
-    r: () => flip('again'),
+    r: () => {
+      if (canRun) flip('again');
+    },
     e: () => flip('export'),
     p: () => {
       if (canBeReference) flip('reference');
@@ -35,9 +40,11 @@ export function ComparisonActions({ run, base }: ComparisonActionsProps) {
   });
   return (
     <>
-      <Button hotkey="r" aria-expanded={open === 'again'} onClick={() => flip('again')}>
-        Run again
-      </Button>
+      {canRun && (
+        <Button hotkey="r" aria-expanded={open === 'again'} onClick={() => flip('again')}>
+          Run again
+        </Button>
+      )}
       <Button hotkey="e" aria-expanded={open === 'export'} onClick={() => flip('export')}>
         Export
       </Button>

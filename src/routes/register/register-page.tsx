@@ -7,14 +7,17 @@ import { VerdictBlock } from '../../components/sheet/verdict-block.tsx';
 import { Button } from '../../components/ui/button.tsx';
 import { Choice } from '../../components/ui/choice.tsx';
 import { QueryState } from '../../components/ui/query-state.tsx';
+import { StateNote } from '../../components/ui/state-note.tsx';
 import { previewQuery } from '../../features/builds/build-sources.queries.ts';
 import { buildsQuery } from '../../features/builds/builds.queries.ts';
 import { SourceArchive } from '../../features/builds/source-archive.tsx';
 import { SourceFolder } from '../../features/builds/source-folder.tsx';
 import { SourceGit } from '../../features/builds/source-git.tsx';
+import { libraryQuery } from '../../features/libraries/libraries.queries.ts';
 import { useKeys } from '../../lib/use-keys.ts';
 import { useViewState } from '../../lib/use-view-state.ts';
 import { paths } from '../../paths.ts';
+import { useMayIn } from '../use-may-in.ts';
 import { PreviewSheet } from './preview-sheet.tsx';
 
 const sources = [
@@ -82,6 +85,8 @@ export function RegisterPage() {
   const navigate = useNavigate();
   const id = Number(view.get('preview')) || null;
   const preview = useQuery({ ...previewQuery(library, id ?? 0), enabled: id !== null });
+  const canRegister = useMayIn(library)('build.register');
+  const known = useQuery(libraryQuery(library));
   const another = (): void => view.clear('preview');
   useKeys({ escape: () => (id === null ? void navigate(paths.library(library)) : another()) });
   return (
@@ -94,7 +99,13 @@ export function RegisterPage() {
       ]}
       keys={[{ keys: ['esc'], does: id === null ? 'back to the library' : 'another source' }]}
     >
-      {id === null ? (
+      {known.data !== undefined && !canRegister ? (
+        <Entry title="Register a build">
+          <StateNote title="Only members register builds">
+            Ask a maintainer of {library} to make you a member.
+          </StateNote>
+        </Entry>
+      ) : id === null ? (
         <Sources library={library} onPreview={(made) => view.set({ preview: String(made.id) })} />
       ) : preview.data === undefined ? (
         <Entry title="Preview">

@@ -16,6 +16,7 @@ import { useCancelRun, useRunAgain } from '../../features/runs/runs.queries.ts';
 import { formatCommit, formatCount, formatDateTime } from '../../lib/format.ts';
 import { useKeys } from '../../lib/use-keys.ts';
 import { paths } from '../../paths.ts';
+import { useMayIn } from '../use-may-in.ts';
 
 export interface RunHeadProps {
   run: RunDetail;
@@ -38,15 +39,18 @@ export function RunHead({ run, solves, cases }: RunHeadProps) {
   const cancel = useCancelRun(run.id);
   const again = useRunAgain(run.id);
   const isLive = run.status === 'queued' || run.status === 'running';
-  const canBeReference = useLacksReference(run);
+  const may = useMayIn(run.library);
+  const canRun = may('run.start');
+  const canCancel = may('run.cancel');
+  const canBeReference = useLacksReference(run) && may('reference.accept');
   const [open, setOpen] = useState<'again' | 'reference' | null>(null);
   const flip = (which: 'again' | 'reference'): void => setOpen(open === which ? null : which);
   useKeys({
     s: () => {
-      if (isLive) cancel.mutate();
+      if (isLive && canCancel) cancel.mutate();
     },
     r: () => {
-      if (!isLive) flip('again');
+      if (!isLive && canRun) flip('again');
     },
     p: () => {
       if (canBeReference) flip('reference');
@@ -73,9 +77,11 @@ export function RunHead({ run, solves, cases }: RunHeadProps) {
       lead={run.reason ?? undefined}
       actions={
         isLive ? (
-          <Button hotkey="s" onClick={() => cancel.mutate()} disabled={cancel.isPending}>
-            Stop the run
-          </Button>
+          canCancel && (
+            <Button hotkey="s" onClick={() => cancel.mutate()} disabled={cancel.isPending}>
+              Stop the run
+            </Button>
+          )
         ) : (
           <>
             {run.against !== null && solves.length > 0 && (
@@ -83,9 +89,11 @@ export function RunHead({ run, solves, cases }: RunHeadProps) {
                 Read the comparison
               </ButtonLink>
             )}
-            <Button hotkey="r" aria-expanded={open === 'again'} onClick={() => flip('again')}>
-              Run again
-            </Button>
+            {canRun && (
+              <Button hotkey="r" aria-expanded={open === 'again'} onClick={() => flip('again')}>
+                Run again
+              </Button>
+            )}
             {canBeReference && (
               <TextAction hotkey="p" aria-expanded={open === 'reference'} onClick={() => flip('reference')}>
                 Make these results the reference
