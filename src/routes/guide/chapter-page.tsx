@@ -1,5 +1,5 @@
-import { Fragment } from 'react';
-import { Link, useNavigate, useParams } from 'react-router';
+import { Fragment, useEffect } from 'react';
+import { Link, useLocation, useNavigate, useParams } from 'react-router';
 import { chapterOf, chapters } from '../../../shared/guide/chapters.ts';
 import type { Chapter } from '../../../shared/guide/section.ts';
 import { Entry } from '../../components/sheet/entry.tsx';
@@ -29,6 +29,15 @@ function Neighbour({
 
 function ChapterSheet({ chapter }: { chapter: Chapter }) {
   const navigate = useNavigate();
+  const { hash } = useLocation();
+  // The section that an address names is not there yet when the browser looks for it.
+  useEffect(() => {
+    if (hash === '') return;
+    const frame = requestAnimationFrame(() => {
+      document.getElementById(decodeURIComponent(hash.slice(1)))?.scrollIntoView();
+    });
+    return () => cancelAnimationFrame(frame);
+  }, [hash]);
   const index = chapters.indexOf(chapter);
   const [before, after] = [chapters[index - 1], chapters[index + 1]];
   const go = (to: Chapter | undefined): void => {
