@@ -7,7 +7,7 @@ import { LoadingStrokes } from '../../components/ui/loading-strokes.tsx';
 import { RichText } from '../../components/ui/rich-text.tsx';
 import { StateNote } from '../../components/ui/state-note.tsx';
 import { useMay } from '../../features/session/use-may.ts';
-import { formatCommit, formatCount, formatDateTime } from '../../lib/format.ts';
+import { formatCommit, formatCount, formatDateTime, formatFigure } from '../../lib/format.ts';
 import { moveRowFocus } from '../../lib/row-focus.ts';
 import { useKeys } from '../../lib/use-keys.ts';
 import { paths } from '../../paths.ts';
@@ -139,7 +139,7 @@ export function OverviewPage() {
       ? [{ what: build.subject ?? build.label, broke: comparison.changes.broke ?? 0 }]
       : [],
   );
-  const within = judged.filter(({ comparison }) => comparison?.verdict === 'within allowances').length;
+  const within = judged.filter(({ comparison }) => comparison?.verdict === 'within allowances');
   const isEmpty = !isReading && libraries.length === 0;
   return (
     <Page
@@ -176,7 +176,7 @@ export function OverviewPage() {
           }
           lead={
             judged.length > 0
-              ? `The newest ${formatCount(judged.length, 'build')} of ${formatCount(libraries.length, 'library', 'libraries')} were looked at: ${within} within allowances.`
+              ? `The newest ${formatCount(judged.length, 'build')} of ${formatCount(libraries.length, 'library', 'libraries')} were looked at: ${formatFigure(within.length)} within allowances.`
               : undefined
           }
         />
@@ -196,6 +196,11 @@ export function OverviewPage() {
           note="Of the newest builds of each library, on the suite that it is run on most; against the reference, or else the build before."
         >
           <VerdictRows judged={notWithin} />
+        </Entry>
+      )}
+      {within.length > 0 && (
+        <Entry title="Within allowances">
+          <VerdictRows judged={within} />
         </Entry>
       )}
       <Failures failedBuilds={overview.failedBuilds} failedRuns={overview.failedRuns} />
