@@ -63,7 +63,7 @@ function expectedInLibrary(row: LibraryRow, asker: string, visibility: Visibilit
   if (asker === 'outsider' || asker === 'newcomer')
     return visibility === 'private' ? 'unseen' : isOpen ? 'allowed' : 'refused';
   if (asker === 'admin') return row.admin || isOpen ? 'allowed' : 'refused';
-  const role = roles.indexOf(asker);
+  const role = roles.findIndex((one) => one === asker);
   if (role !== -1) return role >= roles.indexOf(row.from) ? 'allowed' : 'refused';
   return row.scopes?.some((scope) => scope === asker) ? 'allowed' : 'refused';
 }

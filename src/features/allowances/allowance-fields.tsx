@@ -25,12 +25,12 @@ function AddException({ draft, solvers, traits, onChange }: Omit<AllowanceFields
   if (exception === undefined) return null;
   return (
     <div className="flex flex-wrap items-center gap-x-3 gap-y-2 pt-3">
-      <label className="inline-flex items-center gap-2">
+      <label className="inline-flex max-w-full flex-wrap items-center gap-2">
         <span className="text-table text-ink-2">an exception for</span>
         <select
           value={`${exception.kind} ${exception.name}`}
           onChange={(event) => setChosen(event.target.value)}
-          className="min-h-7 rounded-control border border-rule-strong bg-sheet px-2 py-1 text-table"
+          className="min-h-7 max-w-full rounded-control border border-rule-strong bg-sheet px-2 py-1 text-table"
         >
           {free.map(({ kind, name }) => (
             <option key={`${kind} ${name}`} value={`${kind} ${name}`}>

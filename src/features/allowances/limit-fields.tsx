@@ -18,7 +18,7 @@ export function LimitFields({ whose, texts, otherwise, problemOf, onChange }: Li
     return (
       <td
         key={name}
-        className="align-top! max-wide:grid max-wide:grid-cols-[13em_auto] max-wide:items-center max-wide:justify-start"
+        className="align-top! max-wide:grid max-wide:grid-cols-[minmax(0,12em)_7em] max-wide:items-center"
         data-label={`${label}, ${unit}`}
       >
         <input

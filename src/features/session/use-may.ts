@@ -13,12 +13,3 @@ export function useMay(): (action: Action, library?: AskedLibrary) => boolean {
   const person = usePerson();
   return (action, library) => personMay(person, action, library);
 }
-
-/**
- * The same for a library of which only the name is known. For actions that only members may do, whoever else
- * sees the library does not matter.
- */
-export function useMayAsMember(library: string): (action: Action) => boolean {
-  const person = usePerson();
-  return (action) => personMay(person, action, { slug: library, visibility: 'private' });
-}
