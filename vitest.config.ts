@@ -25,6 +25,8 @@ export default defineConfig({
         extends: true,
         test: {
           name: 'e2e',
+          // Each file starts the product with its demo; two at once would only slow each other down.
+          fileParallelism: false,
           include: ['tests/e2e/**/*.test.ts'],
           testTimeout: 120_000,
           hookTimeout: 180_000,

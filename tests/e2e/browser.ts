@@ -23,7 +23,7 @@ export async function startDemoSite(): Promise<DemoSite> {
   const data = mkdtempSync(join(tmpdir(), 'tallyroot-e2e-'));
   const server = execa('node', ['--import', 'tsx', 'server/start.ts'], {
     cwd: root,
-    env: { DATA_DIR: data, PORT: '0', DEMO: 'on' },
+    env: { DATA_DIR: data, PORT: '0', MAIL_CATCHER_PORT: '0', DEMO: 'on' },
     reject: false,
     all: true,
   });
