@@ -1,5 +1,6 @@
 import { type ReactNode, useEffect, useState } from 'react';
 import { Link } from 'react-router';
+import { careSentence } from '../../../shared/guide/care.ts';
 import { useKeys } from '../../lib/use-keys.ts';
 import { KeyList, type PageKey } from './key-list.tsx';
 import { KeysDialog } from './keys-dialog.tsx';
@@ -15,9 +16,6 @@ export interface PageProps {
   keys?: readonly PageKey[];
   children: ReactNode;
 }
-
-export const careSentence =
-  'Results say how a build behaved on the listed equations on one machine. They are no proof of correctness and no licence to use a solver where people can be hurt; there, the codes and the licensed practice of the place decide.';
 
 /** Trail, entries, and at the foot the keys of this page and the sentence of care. */
 export function Page({ title, trail, keys = [], children }: PageProps) {

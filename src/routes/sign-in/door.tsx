@@ -1,7 +1,7 @@
 import { type ReactNode, useEffect, useId } from 'react';
 import { Link } from 'react-router';
+import { careSentence } from '../../../shared/guide/care.ts';
 import { BrandMark } from '../../components/sheet/brand-mark.tsx';
-import { careSentence } from '../../components/sheet/page.tsx';
 import { SchemeSwitch } from '../../components/sheet/scheme-switch.tsx';
 import { paths } from '../../paths.ts';
 
